@@ -21,6 +21,10 @@ export const judgements = mysqlTable('judgements', {
   /** The level the judge would give on this piece; signed later, gathered with others. Null: none. */
   level: tinyint('level'),
   scales: json('scales').$type<Record<string, number> | null>(),
+  /** Keys of the lesson's faults the judge pointed to. */
+  faults: json('faults').$type<string[] | null>(),
+  /** A photo was still on its tablet, and the judge had the piece in the hand instead. */
+  inHand: boolean('in_hand').notNull().default(false),
   wordsId: ulid('words_id'),
   signerLevel: tinyint('signer_level').notNull(),
   at: moment('at').notNull(),
@@ -44,6 +48,8 @@ export const marks = mysqlTable('marks', {
   /** For a measured line: inside its tolerance at the level given, worked out when judged. */
   within: boolean('within'),
   essential: boolean('essential').notNull(),
+  /** Said by one press of "the rest are yes", never for an essential line. */
+  rest: boolean('rest').notNull().default(false),
   photoId: ulid('photo_id'),
 }, t => [
   primaryKey({ name: 'pk_marks', columns: [t.studioId, t.judgementId, t.criterion] }),
@@ -120,6 +126,10 @@ export const standings = mysqlTable('standings', {
   signedOn: date('signed_on', { mode: 'string' }),
   signOffId: ulid('sign_off_id'),
   lastPieceOn: date('last_piece_on', { mode: 'string' }),
+  /** The last day in an unbroken run of work since the sign-off; what lapsed before it is not brought back by a later piece. */
+  aliveOn: date('alive_on', { mode: 'string' }),
+  /** Days the level lives without practice, as the revision it was signed under says. */
+  keeps: int('keeps'),
   pieces: int('pieces').notNull(),
   openPiece: ulid('open_piece'),
   placeNo: int('place_no'),
