@@ -13,6 +13,7 @@ export const MAIL_KINDS = ['invitation', 'reset', 'email-change', 'look-given', 
 export type MailKind = (typeof MAIL_KINDS)[number]
 export const MAIL_STATES = ['waits', 'sending', 'sent', 'given-up'] as const
 export const RELATION_KINDS = ['relative', 'partner', 'employer'] as const
+export type RelationKind = (typeof RELATION_KINDS)[number]
 /** What a new revision changes: its first use, words only, a step, or the standard or safety. */
 export const EFFECTS = ['first', 'words', 'step', 'standard'] as const
 export type Effect = (typeof EFFECTS)[number]
