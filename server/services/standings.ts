@@ -1,6 +1,6 @@
 import { and, asc, desc, eq, ne, sql } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/mysql-core'
-import { dayIn } from '../../shared/judging/days'
+import { dayIn } from '../../shared/bench/day'
 import { JUDGING_SETTINGS_KEY, settingsAt } from '../../shared/judging/settings'
 import { isBlank, standingOf, type Standing, type StandingFacts } from '../../shared/judging/standing'
 import type { DbOrTx, Tx } from '../db/client'
@@ -54,7 +54,7 @@ export async function standingFacts(db: DbOrTx, studioId: string, personId: stri
     .orderBy(desc(revisions.number)).limit(1)
   return {
     signs: await signFacts(db, studioId, personId, lessonId), pieces: made,
-    judged: judged.map(one => ({ ...one, day: dayIn(one.at, zone) })), taught: taught.map(one => dayIn(one.at, zone)), revisionRead: read?.id ?? null,
+    judged: judged.map(one => ({ ...one, day: dayIn(zone, one.at) })), taught: taught.map(one => dayIn(zone, one.at)), revisionRead: read?.id ?? null,
   }
 }
 

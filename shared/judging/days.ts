@@ -1,14 +1,7 @@
-/** Days as `2026-03-01`, in a studio's own time zone. A day has no hours: sums on it are done in UTC, where every day has 24. */
+/** Sums on days as `2026-03-01`. A day has no hours: they are done in UTC, where every day has 24. `dayIn` of bench/day.ts says which day it is. */
 
 const DAY = /^\d{4}-\d\d-\d\d$/
 const MS = 86_400_000
-
-/** The day it is in a zone (IANA name) at a moment. */
-export function dayIn(at: Date, zone: string): string {
-  const parts = new Intl.DateTimeFormat('en-GB', { timeZone: zone, year: 'numeric', month: '2-digit', day: '2-digit' }).formatToParts(at)
-  const part = (type: Intl.DateTimeFormatPartTypes) => parts.find(one => one.type === type)?.value ?? ''
-  return `${part('year').padStart(4, '0')}-${part('month')}-${part('day')}`
-}
 
 function middayOf(day: string): number {
   const at = DAY.test(day) ? Date.parse(`${day}T12:00:00Z`) : Number.NaN

@@ -1,6 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { addDays, dayIn, daysBetween } from '#shared/judging/days'
+import { dayIn } from '#shared/bench/day'
+import { addDays, daysBetween } from '#shared/judging/days'
 import { lapse } from '#shared/judging/lapse'
 import { settingsAt, USUAL_SETTINGS } from '#shared/judging/settings'
 
@@ -10,10 +11,10 @@ const day = fc.date({ min: new Date('2000-01-01T00:00:00Z'), max: new Date('2099
 describe('days', () => {
   it('are the days of the zone, not of the server', () => {
     const at = new Date('2026-03-01T23:30:00Z')
-    expect(dayIn(at, 'Europe/London')).toBe('2026-03-01')
-    expect(dayIn(at, 'Europe/Warsaw')).toBe('2026-03-02')
-    expect(dayIn(at, 'America/Los_Angeles')).toBe('2026-03-01')
-    expect(dayIn(at, 'Pacific/Kiritimati')).toBe('2026-03-02')
+    expect(dayIn('Europe/London', at)).toBe('2026-03-01')
+    expect(dayIn('Europe/Warsaw', at)).toBe('2026-03-02')
+    expect(dayIn('America/Los_Angeles', at)).toBe('2026-03-01')
+    expect(dayIn('Pacific/Kiritimati', at)).toBe('2026-03-02')
   })
   it('count over months, leap days and the days the clocks change', () => {
     expect(addDays('2024-02-28', 1)).toBe('2024-02-29')
@@ -41,8 +42,8 @@ describe('lapse', () => {
   })
   it('drops on the day of the studio, which begins at other moments in other zones', () => {
     const moment = new Date(`${addDays(until, -1)}T23:30:00Z`)
-    expect(lapse(row(4, '2026-01-10'), USUAL_SETTINGS, dayIn(moment, 'Europe/London')).state).toBe('lapsed')
-    expect(lapse(row(4, '2026-01-10'), USUAL_SETTINGS, dayIn(moment, 'America/New_York')).state).toBe('refresh-due')
+    expect(lapse(row(4, '2026-01-10'), USUAL_SETTINGS, dayIn('Europe/London', moment)).state).toBe('lapsed')
+    expect(lapse(row(4, '2026-01-10'), USUAL_SETTINGS, dayIn('America/New_York', moment)).state).toBe('refresh-due')
   })
   it('takes the usual life where none is kept with the level', () => {
     expect(lapse(row(4, '2026-01-10', null), { ...USUAL_SETTINGS, usualKeeps: 10 }, '2026-01-20').state).toBe('lapsed')
