@@ -3,7 +3,7 @@ import type { Gate, GateFacts } from '../judging/gates'
 import type { PieceEvidence } from '../judging/evidence'
 import type { Line } from '../judging/marks'
 import type { MaySign, Reason } from '../judging/signer'
-import type { Outcome, Seen } from '../schemas/lists'
+import type { Outcome, Seen, SignOffKind } from '../schemas/lists'
 
 export interface LookRow {
   piece: string
@@ -95,3 +95,30 @@ export interface WaitingToSign { items: ToSign[], secondNames: SecondNameRow[] }
 export interface Signed { id: string, ok: true, level: number, needsSecondName: boolean }
 export interface NotSigned { id: string, ok: false, statusCode: number, says: string, reasons: Reason[] }
 export type SignResult = Signed | NotSigned
+
+export interface NameUnder { id: string, kind: SignOffKind, name: string, level: number, byLevel: number, at: string }
+export interface SignOffPiece { id: string, label: string, judgement: string, day: string, seen: Seen, n: number, joinedAfter: number }
+export interface SignOffView {
+  id: string
+  person: string
+  name: string
+  lesson: string
+  lessonId: string
+  revision: number
+  level: number
+  kind: SignOffKind
+  of: string
+  at: string
+  day: string
+  isInForce: boolean
+  oneSignature: boolean
+  isSelf: boolean
+  names: NameUnder[]
+  pieces: SignOffPiece[]
+  /** Things that came in after the judge looked: shown, of no effect. */
+  joinedAfter: number
+  digest: string
+  /** The digest, taken again from the record, is the one that was signed. */
+  isWhole: boolean
+  words: string | null
+}
