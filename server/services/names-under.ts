@@ -10,7 +10,7 @@ import { pairOf, todayOf } from './judging-facts'
 import { queueMail } from './mail'
 import { currentNames, nameIn } from './person-names'
 import { found, refuse } from './refuse'
-import { lockPerson, onlyOnce, type SignedOnce, standingLevel, writeSignOff } from './sign-offs'
+import { lockPerson, onlyOnce, ownSignOff, type SignedOnce, standingLevel, writeSignOff } from './sign-offs'
 import { readStanding } from './standings'
 
 /** Puts the second name under a level that stands on one signature. Never the first signer's, never the maker's. */
@@ -23,6 +23,8 @@ async function secondNameIn(tx: Tx, who: Actor, signOffId: string, id: string, n
   const [about] = await tx.select().from(signOffs).where(ofStudio)
   const first = found(about)
   await lockPerson(tx, who.studioId, first.personId)
+  const there = await ownSignOff(tx, who, id)
+  if (there) return there
   const today = await todayOf(tx, who.studioId, now)
   const named = await tx.select({ by: signOffs.by }).from(signOffs).where(and(eq(signOffs.studioId, who.studioId), eq(signOffs.of, signOffId), eq(signOffs.kind, 'countersign')))
   const standing = await readStanding(tx, who.studioId, first.personId, first.lessonId)
@@ -53,6 +55,8 @@ async function foundingIn(tx: Tx, who: Actor, { id, person, lesson }: { id: stri
   const revisionId = found(row).revision
   if (!revisionId) refuse(422, 'This lesson is not in use yet. Put it into use first.')
   await lockPerson(tx, who.studioId, person)
+  const there = await ownSignOff(tx, who, id)
+  if (there) return there
   const [member] = await tx.select({ roles: memberships.roles, leftAt: memberships.leftAt }).from(memberships).where(and(eq(memberships.studioId, who.studioId), eq(memberships.personId, person)))
   const holder = found(member)
   const names = await currentNames(tx, [person])

@@ -56,7 +56,8 @@ export async function onlyOnce(db: Db, who: Actor, id: string, work: (tx: Tx) =>
   }
 }
 
-async function ownSignOff(db: DbOrTx, who: Actor, id: string): Promise<SignedOnce | null> {
+/** The sign-off of this id, when this person made it before; asked again once the lock is held. */
+export async function ownSignOff(db: DbOrTx, who: Actor, id: string): Promise<SignedOnce | null> {
   const [row] = await db.select().from(signOffs).where(and(eq(signOffs.studioId, who.studioId), eq(signOffs.id, id)))
   if (!row) return null
   if (row.by !== who.personId) refuse(409, 'This was signed by another person. Look again.')
