@@ -34,6 +34,12 @@ export async function actOnPiece<K extends InstructorKind>(tx: Tx, who: Actor, a
   return ledger
 }
 
+/** Was this act taken before? A page sends it again when it did not hear the answer. */
+export async function isDone(tx: Tx, studioId: string, id: string): Promise<boolean> {
+  const rows = await tx.select({ n: pieceEvents.n }).from(pieceEvents).where(and(eq(pieceEvents.studioId, studioId), eq(pieceEvents.id, id)))
+  return rows.length > 0
+}
+
 async function writeAct<K extends InstructorKind>(tx: Tx, ledger: Ledger, actor: string, act: Act<K>, now: Date, instructor: boolean): Promise<void> {
   const seq = await lastSeq(tx, ledger.studioId, act.pieceId, act.tablet) + 1
   const event = {
