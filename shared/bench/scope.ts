@@ -1,12 +1,9 @@
 /** The names a lesson's expressions may use in one piece: its sizes and figures as told, and the facts it began with. */
-import type { Kind, Lesson, Size, SizeUnit } from '../lesson/schema'
-import type { Scope, Value } from '../lesson/figures'
+import { KIND_OF_UNIT, type Scope, type Value } from '../lesson/figures'
+import type { Kind, Lesson, Size } from '../lesson/schema'
 import type { PieceStarted, Told } from './events'
 
-/** The kind a size has once told; wire and cord are ways to ask for a length. */
-export const KIND_OF_UNIT: Record<SizeUnit, Kind> = {
-  mm: 'length', wire: 'length', cord: 'length', count: 'count', number: 'number', g: 'mass', deg: 'angle', metal: 'metal', choice: 'choice', yes_no: 'yes_no',
-}
+export { KIND_OF_UNIT }
 
 /** A value as events carry it (decimal text; yes, no; words) in its kind. Null when the text is not of that kind. */
 export function valueOf(text: string, kind: Kind): Value | null {
