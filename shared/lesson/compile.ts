@@ -24,6 +24,7 @@ export function compile(whole: string, options: CompileOptions = {}): Compiled {
   if (source.length < whole.length) findings.add('too-long', { from: source.length, to: source.length }, `A lesson is at most 256 KiB and ${MOST_LINES} lines. What comes after is not read.`)
   const front = readFront(source, findings)
   const head = readHead(front.entries, findings, front.missing)
+  findings.quiet('yaml', ['front-missing', 'front-value'])
   const { sighted, ...body } = readBody(source, front.bodyFrom, findings)
   const lesson = { ...head, ...body }
   if (lesson.sizes.length + lesson.figures.length > MOST_NAMES) findings.add('too-long', { from: 0, to: 3 }, `A lesson has at most ${MOST_NAMES} sizes and figures.`)

@@ -55,6 +55,14 @@ export class Findings {
     this.list.push(found)
   }
 
+  /** Where a line has this finding, these others on it (or at the head of the file) only say the same again. */
+  quiet(cause: Code, echoes: readonly Code[]): void {
+    const lines = new Set(this.list.filter(finding => finding.code === cause).map(finding => finding.line))
+    if (lines.size === 0) return
+    const kept = this.list.filter(finding => !echoes.some(echo => echo === finding.code) || (finding.line > 1 && !lines.has(finding.line)))
+    this.list.splice(0, this.list.length, ...kept)
+  }
+
   /** In the order of the source. */
   sorted(): Finding[] {
     return [...this.list].sort((a, b) => a.from - b.from || a.to - b.to || (a.code < b.code ? -1 : 1))
