@@ -28,13 +28,14 @@ export async function lastRevision(db: DbOrTx, studioId: string, lessonId: strin
 }
 
 /** The text in hand with all the desk needs to check it as the server would. */
-export async function readDraft(db: Db, studioId: string, address: string): Promise<DraftView> {
+export async function readDraft(db: Db, { studioId, personId }: Actor, address: string): Promise<DraftView> {
   const lesson = await lessonOf(db, studioId, address)
   const draft = await draftOf(db, studioId, lesson.id)
   const last = await lastRevision(db, studioId, lesson.id)
   const [base] = draft.baseRevision ? await db.select({ number: revisions.number }).from(revisions).where(and(eq(revisions.studioId, studioId), eq(revisions.id, draft.baseRevision))) : []
   const names = await namesOf(db, [draft.savedBy])
   return {
+    reader: personId,
     lesson: { id: lesson.id, slug: lesson.slug, stage: stageOf(lesson, last ? 1 : 0) },
     source: draft.source, etag: draft.etag, savedAt: draft.savedAt.toISOString(), by: names.get(draft.savedBy) ?? '',
     base: base ?? null, pictures: await picturesBeside(db, studioId, lesson.id), slugs: await slugsOf(db, studioId), previous: last?.compiled ?? null,

@@ -51,6 +51,8 @@ export interface DraftPicture {
 }
 
 export interface DraftView {
+  /** Who reads: texts kept on a device are kept apart by person. */
+  reader: string
   lesson: { id: string, slug: string, stage: LessonStage }
   source: string
   etag: string

@@ -27,3 +27,17 @@ export function lineKinds(lines: readonly string[]): LineKind[] {
     return block
   })
 }
+
+export interface LinePart { text: string, mark: 'error' | 'advice' | null }
+
+/** A line cut where findings begin and end; where two lie over each other, an error shows. `start` is the line's offset. */
+export function lineParts(line: string, start: number, findings: readonly { from: number, to: number, severity: 'error' | 'advice' }[]): LinePart[] {
+  const end = start + line.length
+  const here = findings.filter(({ from, to }) => from < end && Math.max(to, from + 1) > start)
+  const cuts = [...new Set([start, end, ...here.flatMap(({ from, to }) => [from, Math.max(to, from + 1)])])].filter(at => at >= start && at <= end).sort((a, b) => a - b)
+  const markAt = (at: number): LinePart['mark'] => {
+    const over = here.filter(({ from, to }) => from <= at && at < Math.max(to, from + 1))
+    return over.find(one => one.severity === 'error')?.severity ?? over[0]?.severity ?? null
+  }
+  return cuts.slice(0, -1).map((at, index) => ({ text: line.slice(at - start, (cuts[index + 1] ?? end) - start), mark: markAt(at) }))
+}

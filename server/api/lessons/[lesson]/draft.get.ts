@@ -5,5 +5,5 @@ import { readDraft } from '#server/services/drafts'
 export default defineEventHandler(async (event) => {
   const who = await requireMay(event, 'write-lessons')
   const { lesson } = await readParams(event, LessonParamsSchema)
-  return await readDraft(useDatabase(), who.studioId, lesson)
+  return await readDraft(useDatabase(), who, lesson)
 })
