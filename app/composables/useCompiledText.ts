@@ -25,7 +25,7 @@ export function useCompiledText(source: Ref<string>, context: MaybeRefOrGetter<C
     const { compile } = await import('#shared/lesson/compile')
     const text = source.value
     const { pictures, lessons, previous } = toValue(context)
-    result.value = { ...compile(text, { pictures, lessons, previous: previous ?? undefined }), source: text }
+    result.value = { ...compile(text, { pictures: new Set(pictures), lessons: new Set(lessons), previous }), source: text }
   }
 
   watchDebounced([source, () => toValue(context)], refresh, { debounce: REST, maxWait: REST * 4 })

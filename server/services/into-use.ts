@@ -1,6 +1,6 @@
 import { and, eq, max } from 'drizzle-orm'
 import { shaOf, sha256 } from '../../shared/lesson/canonical'
-import { compile } from '../../shared/lesson/compile'
+import { compile, errorsOf } from '../../shared/lesson/compile'
 import { effectOf } from '../../shared/lesson/effect'
 import { keyEdits, writeKeys, type KeyEdit } from '../../shared/lesson/keys'
 import { picturesOf, type PictureUse } from '../../shared/lesson/pictures'
@@ -24,7 +24,7 @@ async function tryDraft(db: DbOrTx, studioId: string, lessonId: string): Promise
   const draft = await draftOf(db, studioId, lessonId)
   const beside = await picturesBeside(db, studioId, lessonId)
   const previous = (await lastRevision(db, studioId, lessonId))?.compiled ?? null
-  const options = { pictures: beside.map(picture => picture.name), lessons: await slugsOf(db, studioId), previous: previous ?? undefined }
+  const options = { pictures: new Set(beside.map(picture => picture.name)), lessons: new Set(await slugsOf(db, studioId)), previous }
   const first = compile(draft.source, options)
   const keys = keyEdits(draft.source, first.lesson)
   const source = writeKeys(draft.source, keys)
@@ -40,8 +40,6 @@ function sourceShaOf({ source, uses, shas }: Pick<Tried, 'source' | 'uses' | 'sh
   const shown = uses.map(({ name }) => `${name} ${shas.get(name) ?? ''}`).sort()
   return sha256([sha256(source), ...shown].join('\n'))
 }
-
-const errorsIn = (findings: readonly Finding[]) => findings.filter(finding => finding.severity === 'error')
 
 /** What putting the draft into use would do, for the page that asks for the word. */
 export async function useView(db: Db, studioId: string, address: string): Promise<UseView> {
@@ -74,7 +72,7 @@ export async function putIntoUse(db: Db, who: Actor, address: string, body: UseB
     if (again) return { revision: sameAgain(found(lesson), again), same: true, etag: draft.etag }
     if (!isSeen) refuse(409, 'The text or its pictures changed since this page opened. Read it again, then put it into use.')
     if (found(lesson).putAwayAt) refuse(409, 'This lesson is put away. Take it out first.')
-    const errors = errorsIn(tried.findings)
+    const errors = errorsOf(tried)
     if (errors.length > 0) refuse(422, errors.length === 1 ? 'One error keeps this lesson from use. Mend it first.' : `${errors.length} errors keep this lesson from use. Mend them first.`, { findings: tried.findings })
     const number = await nextNumber(tx, who.studioId, lessonId)
     if ((body.effect === 'first') !== (number === 1)) refuse(422, number === 1 ? 'This is the first revision.' : 'Say what changes for those who hold this lesson.')

@@ -2,7 +2,7 @@ import { and, asc, desc, eq, sql } from 'drizzle-orm'
 import { ulid } from 'ulid'
 import { LessonSchema } from '../../shared/lesson/schema'
 import { skeletonOf } from '../../shared/lesson/skeleton'
-import { freeSlug, titleOf } from '../../shared/lesson/slug'
+import { freeSlug, titleOf } from '../../shared/lesson/titles'
 import type { NewLessonBody } from '../../shared/schemas/lessons'
 import type { LessonRow, LessonStage } from '../../shared/types/lessons'
 import type { Db, DbOrTx, Tx } from '../db/client'
@@ -78,7 +78,7 @@ export async function makeLesson(db: Db, who: Actor, { id, title, craft }: NewLe
       return await inTransaction(db, async (tx) => {
         const [there] = await tx.select({ id: lessons.id, slug: lessons.slug }).from(lessons).where(and(eq(lessons.studioId, who.studioId), eq(lessons.id, id)))
         if (there) return there
-        const slug = freeSlug(title, new Set(await slugsOf(tx, who.studioId)))
+        const slug = freeSlug(title, await slugsOf(tx, who.studioId))
         await writeLesson(tx, who, { id, slug, craft, source: skeletonOf(title, craft) }, now)
         return { id, slug }
       })

@@ -5,8 +5,8 @@ import type { Craft } from './schema'
 const yamlText = (text: string): string => (/^[A-Za-z][A-Za-z0-9 ,.()-]*$/.test(text) && !/^(?:yes|no|true|false|null|on|off)$/i.test(text) ? text : JSON.stringify(text))
 
 /**
- * A source with every part of a lesson in it and, beside each, what to write there. It is not ready for use: what is
- * missing shows in the margin until it is written.
+ * A source with every part of a lesson in it and, beside each, what to write there. It is not ready for use: its fault
+ * says neither why nor what to do, and that shows in the margin until it is written.
  */
 export function skeletonOf(title: string, craft: Craft): string {
   return `---
@@ -45,7 +45,7 @@ Cut {cut} of {wire} wire.
 READING long
 
 FAULT It is short
-  because: say why it happens
-  do: Say what to do about it.
+  because:
+  do:
 `
 }

@@ -1,5 +1,5 @@
 /** A lesson at its usual sizes, as its page and the writing desk show it. */
-import { workOut } from '#shared/lesson/figures'
+import { KIND_OF_UNIT, workOut } from '#shared/lesson/figures'
 import type { Lesson, SizeValue } from '#shared/lesson/schema'
 
 export type FigureText = (name: string, to?: number) => string
@@ -20,15 +20,13 @@ export function showValue(value: SizeValue | undefined, kind: string, to?: numbe
   return `${Number((Math.round(value / step) * step).toFixed(places))}${SIGNS[kind] ?? ''}`
 }
 
-const KIND_OF_UNIT: Record<string, string> = { mm: 'length', wire: 'length', cord: 'length', g: 'mass', deg: 'angle' }
-
 /** The text of any size or figure of a lesson at its usual sizes; a name that has no value reads as a question mark. */
 export function usualFigures(lesson: Lesson): FigureText {
   const sizes = usualSizes(lesson)
   const worked = workOut(lesson, sizes)
   return (name, to) => {
     const size = lesson.sizes.find(one => one.name === name)
-    if (size) return showValue(size.usual, KIND_OF_UNIT[size.unit] ?? 'number', to)
+    if (size) return showValue(size.usual, KIND_OF_UNIT[size.unit], to)
     const figure = worked.figures[name]
     return figure ? showValue(figure.value, figure.kind, to) : '?'
   }
