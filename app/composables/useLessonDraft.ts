@@ -120,7 +120,10 @@ export function useLessonDraft(view: DraftView): LessonDraft {
     clearTimeout(timer)
     void send()
   })
-  if (isUnsent.value) keepHere(), plan(REST)
+  if (isUnsent.value) {
+    keepHere()
+    plan(REST)
+  }
 
   return { source, keptAt, isUnsent, isKeptHere, trouble, device, etag, send, settle }
 }

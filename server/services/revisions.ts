@@ -1,7 +1,6 @@
 import { and, asc, desc, eq, ne } from 'drizzle-orm'
 import { ulid } from 'ulid'
 import { titleOf } from '../../shared/lesson/titles'
-import type { Lesson } from '../../shared/lesson/schema'
 import type { REVISION_ACTS } from '../../shared/schemas/lists'
 import type { LessonView, RevisionRow } from '../../shared/types/lessons'
 import type { Db, DbOrTx, Tx } from '../db/client'

@@ -58,7 +58,7 @@ function readFault(read: Reader, item: KeywordItem, parts: BlockParts, step: Ste
   const sees = readInline(item.title, read.findings, item.titleAt)
   const because = parts.inline('because')
   const cure = parts.inline('do')
-  if (!because || !cure || item.title === '') read.findings.add('fault-incomplete', item.at, 'A FAULT says what you see, because: why, and do: the cure.')
+  if (!because?.length || !cure?.length || item.title === '') read.findings.add('fault-incomplete', item.at, 'A FAULT says what you see, because: why, and do: the cure.')
   const key = parts.field('key')?.value || slugOf(plainText(sees), keys)
   keys.add(key)
   step.faults.push({ key, sees, because: because ?? [], do: cure ?? [], when: parts.node('when'), range: read.findings.range(item.at.from, item.at.to) })

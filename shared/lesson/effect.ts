@@ -17,8 +17,16 @@ function withoutRanges(value: unknown): unknown {
   return Object.fromEntries(Object.entries(value).filter(([name]) => name !== 'range' && name !== 'source').map(([name, inside]) => [name, withoutRanges(inside)]))
 }
 const same = (a: unknown, b: unknown): boolean => bare(a) === bare(b)
+const EMPTY: Step = {
+  key: '', title: [], range: { from: 0, to: 0, line: 1 }, repeat: null, say: null, when: null, stop: null, oneAct: false, heat: false, usual: null, needs: null, instead: null, safety: [], holds: [],
+  text: [], pictures: [], drawings: [], checks: [], readings: [], photos: [], waits: [], faults: [], why: [], feel: [],
+}
 const stepsOf = (lesson: Lesson): Step[] => lesson.parts.flatMap(part => part.steps)
-const byKey = (lesson: Lesson, of: (step: Step) => unknown): Record<string, unknown> => Object.fromEntries(stepsOf(lesson).map(step => [step.key, of(step)]))
+/** What steps hold, by their keys; a step that holds none of it is left out, so that renaming it changes nothing here. */
+const byKey = (lesson: Lesson, of: (step: Step) => unknown): Record<string, unknown> => {
+  const nothing = bare(of(EMPTY))
+  return Object.fromEntries(stepsOf(lesson).map(step => [step.key, of(step)] as const).filter(([, held]) => bare(held) !== nothing))
+}
 
 interface Rule { effect: 'step' | 'standard', says: string, of: (lesson: Lesson) => unknown }
 /** In the order they are told. A rule finds a change where what it reads of the two lessons differs. */

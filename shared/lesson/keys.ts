@@ -31,11 +31,12 @@ function hasKey(source: string, end: number): boolean {
 /** The edits that write in the key of every part and step that has none yet, in the order of the file. */
 export function keyEdits(source: string, lesson: Lesson): KeyEdit[] {
   const newline = source.includes('\r\n') ? '\r\n' : '\n'
-  const headed = lesson.parts.flatMap(part => [part, ...part.steps]).sort((a, b) => a.range.from - b.range.from)
-  return headed.flatMap(({ key, range }) => {
-    const end = lineEnd(source, range.from)
-    const heading = /^ {0,3}(#{1,2})[ \t]+(.*?)\r?$/.exec(source.slice(range.from, end))
-    if (!heading || hasKey(source, end)) return []
+  // A lesson without parts has one that no heading stands for: it is told by the marks of the heading.
+  const headed = lesson.parts.flatMap(part => [{ key: part.key, from: part.range.from, marks: '#' }, ...part.steps.map(step => ({ key: step.key, from: step.range.from, marks: '##' }))])
+  return headed.sort((a, b) => a.from - b.from).flatMap(({ key, from, marks }) => {
+    const end = lineEnd(source, from)
+    const heading = /^ {0,3}(#{1,2})[ \t]+(.*?)\r?$/.exec(source.slice(from, end))
+    if (heading?.[1] !== marks || hasKey(source, end)) return []
     const isLast = end === source.length
     return [{ at: isLast ? end : end + 1, text: isLast ? `${newline}key: ${key}` : `key: ${key}${newline}`, key, title: heading[2] ?? '' }]
   })
