@@ -12,7 +12,7 @@ import { lessons, revisions } from '../db/schema/lessons'
 import { relations } from '../db/schema/studio'
 import type { Actor } from './actor'
 import { piecesJudged } from './evidence'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 import { heldPermissions } from './permissions'
 import { judgingSettingRows, zoneOf } from './standings'
 

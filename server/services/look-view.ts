@@ -2,7 +2,7 @@ import { and, asc, count, desc, eq } from 'drizzle-orm'
 import { stepOf, type SetOut } from '../../shared/bench/set-out'
 import type { State } from '../../shared/bench/state'
 import { againOf, faultsOf, linesOf } from '../../shared/judging/marks'
-import { plainOf } from '../../shared/judging/plain'
+import { plainIn } from '../../shared/judging/plain'
 import { maySign } from '../../shared/judging/signer'
 import type { HistoryRow, JudgedAlready, LookView, MissRow, PhotoView, TurnTitle } from '../../shared/types/judging'
 import type { Db } from '../db/client'
@@ -14,7 +14,7 @@ import { compiledLesson } from './compiled'
 import { bareEvidence, type PieceJudged, piecesJudged, type PieceRow } from './evidence'
 import { gateFacts } from './judging-facts'
 import { foldRow } from './ledger'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 import { visiblePiece } from './piece-view'
 import { refuse } from './refuse'
 
@@ -34,7 +34,7 @@ export async function lookView(db: Db, who: Actor, pieceId: string, now: Date): 
     photos: kept, awaited: kept.filter(photo => photo.state === 'awaited').length,
     misses: missesOf(set, state), early: state.early.map(address => titleOf(set, address)), faultsSeen: [...new Set(state.faults.map(one => one.fault))], own: state.own,
     history: await historyOf(db, before.filter(one => one.piece.id !== row.id)),
-    faults: faultsOf(set.lesson).map(({ key, sees, because, do: cure }) => ({ key, sees: plainOf(sees, set), because: plainOf(because, set), do: plainOf(cure, set) })),
+    faults: faultsOf(set.lesson).map(({ key, sees, because, do: cure }) => ({ key, sees: plainIn(sees, set), because: plainIn(because, set), do: plainIn(cure, set) })),
     turns: turnTitles(set, state), late: state.late.length, setAside: await countSetAside(db, who.studioId, row.id),
   }
 }
@@ -52,7 +52,7 @@ async function pieceOf(db: Db, row: PieceRow, set: SetOut, state: State): Promis
 export function titleOf(set: SetOut, address: string): string {
   const turn = set.turns[set.at.get(address) ?? -1]
   if (!turn) return address
-  const title = plainOf(stepOf(set, turn).title, set)
+  const title = plainIn(stepOf(set, turn).title, set)
   return turn.last > 1 ? `${title}, ${turn.turn} of ${turn.last}` : title
 }
 
@@ -70,7 +70,7 @@ async function photosOf(db: Db, studioId: string, row: PieceRow, set: SetOut, st
   const rows = await db.select().from(photos).where(and(eq(photos.studioId, studioId), eq(photos.pieceId, row.id))).orderBy(asc(photos.id))
   const taken = new Map(state.photos.map(photo => [photo.id, photo.at]))
   const views = rows.map(photo => ({
-    id: photo.id, turn: photo.turn, title: photo.turn ? titleOf(set, photo.turn) : 'The piece', for: photo.for, state: photo.state, at: taken.get(photo.id) ?? '',
+    id: photo.id, turn: photo.turn, title: photo.turn ? titleOf(set, photo.turn) : 'The piece', for: photo.for, state: photo.state, at: taken.get(photo.id) ?? '', hasScale: photo.hasScale,
   }))
   // Taken in the order of the making; the tablet's clock is good enough for that.
   return views.sort((a, b) => a.at < b.at ? -1 : a.at > b.at ? 1 : 0)

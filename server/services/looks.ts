@@ -7,7 +7,7 @@ import { looks, photos, pieces } from '../db/schema/pieces'
 import type { Actor } from './actor'
 import { heldBy, tiesOf, todayOf } from './judging-facts'
 import { isState } from './ledger'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 import { countToSign } from './to-sign'
 
 const ofRevision = and(eq(revisions.studioId, pieces.studioId), eq(revisions.id, pieces.revisionId))

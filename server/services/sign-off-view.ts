@@ -1,11 +1,11 @@
-import { and, asc, eq } from 'drizzle-orm'
+import { and, asc, count, eq, gt, inArray, ne } from 'drizzle-orm'
 import { may } from '../../shared/judging/roles'
 import type { NameUnder, SignOffPiece, SignOffView } from '../../shared/types/judging'
 import type { Db } from '../db/client'
 import { judgements, signOffPieces, signOffs } from '../db/schema/judging'
 import { revisions } from '../db/schema/lessons'
 import { personNames } from '../db/schema/people'
-import { pieces } from '../db/schema/pieces'
+import { pieceEvents, pieces } from '../db/schema/pieces'
 import type { Actor } from './actor'
 import { digestOf } from './digest'
 import { found } from './refuse'
@@ -20,7 +20,7 @@ export async function signOffView(db: Db, who: Actor, id: string): Promise<SignO
   if (signOff.personId !== who.personId && !may(who.roles, 'see-pieces') && !may(who.roles, 'see-record')) found(null)
   const [revision] = await db.select({ title: revisions.title, number: revisions.number }).from(revisions).where(and(eq(revisions.studioId, who.studioId), eq(revisions.id, signOff.revisionId)))
   const beside = await db.select().from(signOffs).where(and(eq(signOffs.studioId, who.studioId), eq(signOffs.of, id))).orderBy(asc(signOffs.at), asc(signOffs.id))
-  const rests = await piecesUnder(db, who.studioId, id)
+  const rests = await piecesUnder(db, who.studioId, signOff)
   const standing = await readStanding(db, who.studioId, signOff.personId, signOff.lessonId)
   const words = await readWords(db, who.studioId, signOff.wordsId ? [signOff.wordsId] : [])
   return {
@@ -42,13 +42,18 @@ async function nameUnder(db: Db, row: SignOffRow): Promise<NameUnder> {
   return { id: row.id, kind: row.kind, name: await nameThen(db, row.by, row.byNameVersion), level: row.level, byLevel: row.byLevel, at: row.at.toISOString() }
 }
 
-/** The judged pieces a sign-off rests on. What joined after the judge looked, but for the judging itself, is counted and changes nothing. */
-async function piecesUnder(db: Db, studioId: string, id: string): Promise<SignOffPiece[]> {
+/** The judged pieces a sign-off rests on. What arrived after it was signed is counted and changes nothing. */
+async function piecesUnder(db: Db, studioId: string, signOff: SignOffRow): Promise<SignOffPiece[]> {
   const rows = await db.select({ piece: pieces, judgement: judgements }).from(signOffPieces)
     .innerJoin(judgements, and(eq(judgements.studioId, signOffPieces.studioId), eq(judgements.id, signOffPieces.judgementId)))
     .innerJoin(pieces, and(eq(pieces.studioId, judgements.studioId), eq(pieces.id, judgements.pieceId)))
-    .where(and(eq(signOffPieces.studioId, studioId), eq(signOffPieces.signOffId, id))).orderBy(asc(judgements.at), asc(judgements.id))
+    .where(and(eq(signOffPieces.studioId, studioId), eq(signOffPieces.signOffId, signOff.id))).orderBy(asc(judgements.at), asc(judgements.id))
+  const joined = rows.length === 0
+    ? []
+    : await db.select({ piece: pieceEvents.pieceId, count: count() }).from(pieceEvents)
+        .where(and(eq(pieceEvents.studioId, studioId), inArray(pieceEvents.pieceId, rows.map(row => row.piece.id)), gt(pieceEvents.receivedAt, signOff.at), ne(pieceEvents.kind, 'piece.judged')))
+        .groupBy(pieceEvents.pieceId)
   return rows.map(({ piece, judgement }) => ({
-    id: piece.id, label: piece.label, judgement: judgement.id, day: piece.finishedOn ?? '', seen: judgement.seen, n: judgement.n, joinedAfter: Math.max(0, piece.n - judgement.n - 1),
+    id: piece.id, label: piece.label, judgement: judgement.id, day: piece.finishedOn ?? '', seen: judgement.seen, n: judgement.n, joinedAfter: joined.find(one => one.piece === piece.id)?.count ?? 0,
   }))
 }

@@ -11,7 +11,7 @@ import type { Actor } from './actor'
 import { compiledLesson } from './compiled'
 import { piecesJudged } from './evidence'
 import { gateFacts, heldBy, pairOf, tiesOf, todayOf } from './judging-facts'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 
 /** Judgements by this person that give a level and are not signed: the newest of each person and lesson. */
 async function unsigned(db: DbOrTx, who: Actor) {

@@ -75,13 +75,16 @@ function pieceReasons({ piece, settings }: GateFacts, level: SignedLevel): Reaso
   if (!piece.covered) reasons.push({ code: 'not-covered', says: 'Its sizes are outside what the lesson covers, so it is practice and does not count.' })
   if (piece.misses >= settings.missesSpoil) reasons.push({ code: 'misses', says: `One hold point was missed ${piece.misses} times, so it counts for nothing above level 2.` })
   if (piece.seen === 'photo') reasons.push({ code: 'photo-only', says: 'A photo alone is never enough above level 2.' })
-  for (const line of unmet(piece, level)) reasons.push({ code: 'essential', says: saysOfUnmet(piece, line.says, line.live, line.by === 'judge' ? line.said : line.inside[level] ?? null) })
+  const lacking = unmet(piece, level).map(line => ({ ...line, verdict: line.by === 'judge' ? line.said : line.inside[level] ?? null, isUnseen: line.live && (piece.seen === 'piece' || piece.seen === 'photo') }))
+  const unmarked = lacking.filter(line => line.verdict === null && !line.isUnseen)
+  if (unmarked.length > 1) reasons.push({ code: 'essential', says: `${unmarked.length} essential lines are not marked yet.` })
+  for (const line of lacking) if (unmarked.length <= 1 || !unmarked.includes(line)) reasons.push({ code: 'essential', says: saysOfUnmet(line) })
   return reasons
 }
 
-function saysOfUnmet(piece: PieceEvidence, says: string, live: boolean, verdict: string | boolean | null): string {
+function saysOfUnmet({ says, isUnseen, verdict }: { says: string, isUnseen: boolean, verdict: string | boolean | null }): string {
   const line = `Essential: “${says}”`
-  if (live && (piece.seen === 'piece' || piece.seen === 'photo')) return `${line} is seen live or not at all, and this piece was not.`
+  if (isUnseen) return `${line} is seen live or not at all, and this piece was not.`
   if (verdict === null) return `${line} is not marked yet.`
   return verdict === false ? `${line} is outside at this level.` : `${line} is marked ${verdict}.`
 }

@@ -20,7 +20,7 @@ export interface LookRow {
 export interface AskedRow extends Omit<LookRow, 'mayYou' | 'photo'> { look: string, about: string, turn: string | null }
 export interface Looks { now: string, asked: AskedRow[], waiting: LookRow[], resting: LookRow[], toSign: number, secondNames: number }
 
-export interface PhotoView { id: string, turn: string | null, title: string, for: string, state: 'awaited' | 'held' | 'erased', at: string }
+export interface PhotoView { id: string, turn: string | null, title: string, for: string, state: 'awaited' | 'held' | 'erased', at: string, hasScale: boolean | null }
 export interface HistoryRow { piece: string, label: string, day: string, outcome: Outcome, seen: Seen, by: string, level: number | null, misses: number }
 export interface TurnTitle { address: string, title: string }
 export interface FaultChoice { key: string, sees: string, because: string, do: string }
