@@ -1,3 +1,5 @@
+import { fileURLToPath } from 'node:url'
+
 // Where a build goes can be told from outside, so that the tests build beside a running `npm start`.
 const buildDir = process.env.THIRDHAND_BUILD_DIR ?? '.nuxt'
 const outputDir = process.env.THIRDHAND_OUTPUT_DIR ?? '.output'
@@ -8,7 +10,8 @@ export default defineNuxtConfig({
   devtools: { enabled: false },
   telemetry: false,
   buildDir,
-  nitro: { output: { dir: outputDir }, experimental: { tasks: true } },
+  // `#server` is a name on the server side only; the application cannot reach over.
+  nitro: { output: { dir: outputDir }, alias: { '#server': fileURLToPath(new URL('./server', import.meta.url)) } },
   // No islands: the version pinned here lacks later fixes of them (docs/decisions).
   experimental: { componentIslands: false },
   typescript: { strict: true, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },

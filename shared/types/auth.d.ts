@@ -1,0 +1,4 @@
+declare module '#auth-utils' {
+  interface SecureSessionData { session: string, person: string, epoch: number }
+}
+export {}
