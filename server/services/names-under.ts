@@ -1,11 +1,11 @@
 import { and, eq } from 'drizzle-orm'
-import { lapse } from '../../shared/judging/lapse'
 import { foundingReasons, secondNameReasons } from '../../shared/judging/names'
 import type { Db, Tx } from '../db/client'
-import { signOffPieces, signOffs, standings } from '../db/schema/judging'
+import { signOffPieces, signOffs } from '../db/schema/judging'
 import { lessons, revisions } from '../db/schema/lessons'
 import { memberships } from '../db/schema/studio'
 import type { Actor } from './actor'
+import { lessonsHeld } from './founding-view'
 import { pairOf, todayOf } from './judging-facts'
 import { queueMail } from './mail'
 import { currentNames, nameIn } from './names'
@@ -60,17 +60,8 @@ async function foundingIn(tx: Tx, who: Actor, { id, person, lesson }: { id: stri
   const [member] = await tx.select({ roles: memberships.roles, leftAt: memberships.leftAt }).from(memberships).where(and(eq(memberships.studioId, who.studioId), eq(memberships.personId, person)))
   const holder = found(member)
   const names = await currentNames(tx, [person])
-  const reasons = foundingReasons({ roles: who.roles, holder: { name: nameIn(names, person), roles: holder.leftAt ? [] : holder.roles }, isHeld: await isHeld(tx, who.studioId, lesson, now) })
+  const reasons = foundingReasons({ roles: who.roles, holder: { name: nameIn(names, person), roles: holder.leftAt ? [] : holder.roles }, isHeld: (await lessonsHeld(tx, who.studioId, now)).has(lesson) })
   const [reason] = reasons
   if (reason) refuse(reason.code === 'not-manager' ? 403 : 422, reason.says, { reasons })
   return { row: await writeSignOff(tx, who, { id, of: id, kind: 'founding', personId: person, lessonId: lesson, revisionId, level: 5, byLevel: 0, judgements: [], words: '' }, now), needsSecondName: false, isNew: true }
-}
-
-/** Does anybody who is still here hold 5 in the lesson today, with both names where it takes them? */
-async function isHeld(tx: Tx, studioId: string, lessonId: string, now: Date): Promise<boolean> {
-  const { settings, today } = await todayOf(tx, studioId, now)
-  const rows = await tx.select({ standing: standings, leftAt: memberships.leftAt }).from(standings)
-    .innerJoin(memberships, and(eq(memberships.studioId, standings.studioId), eq(memberships.personId, standings.personId)))
-    .where(and(eq(standings.studioId, studioId), eq(standings.lessonId, lessonId), eq(standings.levelSigned, 5)))
-  return rows.some(({ standing, leftAt }) => leftAt === null && !standing.oneSignature && lapse(standing, settings, today).level === 5)
 }

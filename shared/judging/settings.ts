@@ -3,6 +3,7 @@
  * counts of pieces and the days between are common practice, with no source.
  */
 import { z } from 'zod'
+import { PERMISSIONS } from '../lesson/schema'
 import { RELATION_KINDS } from '../schemas/lists'
 
 const count = (usual: number, most: number) => z.number().int().min(0).max(most).default(usual)
@@ -30,6 +31,8 @@ export const JudgingSettingsSchema = z.strictObject({
   neededLevel: z.number().int().min(0).max(4).default(3),
   /** Ties that keep a person from signing. */
   tiesForbid: z.array(z.enum(RELATION_KINDS)).default([...RELATION_KINDS]),
+  /** Not open to people under 18: this studio's rule. */
+  youngForbid: z.array(z.enum(PERMISSIONS)).default(['flame', 'motors', 'goods']),
 })
 export type JudgingSettings = z.infer<typeof JudgingSettingsSchema>
 

@@ -1,7 +1,8 @@
 import { z } from 'zod'
 import { AddressSchema, ShaSchema, UlidSchema } from '../bench/events'
 import { SIGNED_LEVELS } from '../judging/levels'
-import { OUTCOMES, SAYS, SEEN } from './lists'
+import { PERMISSIONS } from '../lesson/schema'
+import { OUTCOMES, PERMISSION_ACTS, SAYS, SEEN } from './lists'
 
 export const SignOffParamsSchema = z.strictObject({ signOff: UlidSchema })
 
@@ -37,3 +38,12 @@ const PasswordSchema = z.string().min(1, 'Say your password.').max(200)
 export const SignBodySchema = z.strictObject({ password: PasswordSchema, items: z.array(SignItemSchema).min(1, 'There is nothing to sign.').max(40) })
 export const SecondNameBodySchema = z.strictObject({ id: UlidSchema, password: PasswordSchema })
 export const FoundingBodySchema = z.strictObject({ id: UlidSchema, person: UlidSchema, lesson: UlidSchema, password: PasswordSchema })
+
+export const PersonParamsSchema = z.strictObject({ person: UlidSchema })
+/** An act on a permission: the reason is asked for all but giving it. */
+export const PermissionBodySchema = z.strictObject({
+  id: UlidSchema, permission: z.enum(PERMISSIONS), act: z.enum(PERMISSION_ACTS), words: WordsSchema.default(''),
+  /** What it is limited to, in a few words: "practice material only". */
+  limit: z.string().trim().max(60).default(''),
+})
+export type PermissionBody = z.output<typeof PermissionBodySchema>

@@ -34,3 +34,4 @@ export type Says = (typeof SAYS)[number]
 export const SIGN_OFF_KINDS = ['sign', 'countersign', 'correction', 'refresh', 'founding'] as const
 export type SignOffKind = (typeof SIGN_OFF_KINDS)[number]
 export const PERMISSION_ACTS = ['grant', 'suspend', 'lift', 'limit', 'withdraw', 'regain'] as const
+export type PermissionAct = (typeof PERMISSION_ACTS)[number]

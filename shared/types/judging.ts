@@ -1,9 +1,10 @@
 /** What the judging pages get from the server. Dates are ISO text; days are `2026-03-01`. */
-import type { Gate, GateFacts } from '../judging/gates'
+import type { Permission } from '../lesson/schema'
+import type { Gate, GateFacts, HeldPermission } from '../judging/gates'
 import type { PieceEvidence } from '../judging/evidence'
 import type { Line } from '../judging/marks'
 import type { MaySign, Reason } from '../judging/signer'
-import type { Outcome, Seen, SignOffKind } from '../schemas/lists'
+import type { Outcome, PermissionAct, Seen, SignOffKind } from '../schemas/lists'
 
 export interface LookRow {
   piece: string
@@ -122,3 +123,9 @@ export interface SignOffView {
   isWhole: boolean
   words: string | null
 }
+
+export interface PermissionActView { id: string, permission: Permission, act: PermissionAct, limit: string | null, by: string, at: string, words: string | null }
+export interface PermissionsView { held: HeldPermission[], acts: PermissionActView[] }
+
+/** Where a founding level may be given, and to whom. */
+export interface FoundingView { lessons: { id: string, title: string }[], instructors: { id: string, name: string }[] }
