@@ -7,7 +7,7 @@ import { classLessons, lessons, revisions } from '../db/schema/lessons'
 import { classes, classPeople, memberships, studios } from '../db/schema/studio'
 import { isDuplicate } from '../db/transaction'
 import type { Actor } from './actor'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 import { found, refuse } from './refuse'
 import { makeCard } from './tokens'
 

@@ -3,7 +3,7 @@ import { levelWords, SIGNED_LEVELS } from '../../shared/judging/levels'
 import type { MailKind } from '../../shared/schemas/lists'
 import type { Db } from '../db/client'
 import { studios } from '../db/schema/studio'
-import { currentNames, nameIn } from './person-names'
+import { currentNames, nameIn } from './names'
 import { readWords } from './words'
 
 export interface Letter { subject: string, text: string, html: string }
