@@ -1,0 +1,74 @@
+/** `npm start`: from nothing to a running studio. Until the packages are installed only Node's own modules are used. */
+import { foldersOf } from './lib/folders.mjs'
+import { placeOf } from './lib/host.mjs'
+import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
+import { startMariadb } from './lib/mariadb.mjs'
+import { endLeftOver, takeLock } from './lib/one-at-a-time.mjs'
+import { isTaken, until } from './lib/run.mjs'
+import { say, Trouble, trouble } from './lib/say.mjs'
+import { secretsOf } from './lib/secrets.mjs'
+import { build, startCatcher, startServer, step } from './lib/services.mjs'
+
+const stops = []
+let stopping = null
+
+/** Stops all that was started, the last first; the database cleanly. */
+function stopAll() {
+  stopping ??= (async () => {
+    for (const stop of stops.splice(0).reverse()) await stop()
+  })()
+  return stopping
+}
+
+async function main() {
+  checkNode()
+  const place = placeOf(process.env)
+  const folders = foldersOf()
+  const release = takeLock(folders)
+  stops.push(release)
+  if (await isTaken(place.port, place.listen)) trouble(`Port ${place.port} is taken by another program. Stop it, or choose another: PORT=${place.port + 1} npm start`)
+  await installPrograms(['mariadb-server-core'])
+  await installPackages()
+  await endLeftOver(folders, until)
+  const secrets = secretsOf(folders)
+  const database = await startMariadb(folders, secrets)
+  stops.push(() => database.stop())
+  await step('scripts/migrate.ts', [], { OWNER_DATABASE_URL: database.owner })
+  const mail = await mailOf(place, folders)
+  if (place.isLocal) await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files })
+  await build('.output', '.nuxt')
+  const server = await startServer('.output', {
+    NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: process.env.NUXT_SESSION_PASSWORD ?? secrets.session, NUXT_SMTP_URL: mail.smtpUrl, NUXT_CATCHER_URL: mail.url, NUXT_PUBLIC_URL: place.url, NUXT_FILES_DIR: folders.files,
+    NITRO_PORT: String(place.port), NITRO_HOST: place.listen, PORT: String(place.port), HOST: place.listen, ...place.isLocal ? { NUXT_SESSION_COOKIE_SECURE: 'false' } : {},
+  }, `http${process.env.NITRO_SSL_CERT ? 's' : ''}://${place.listen === '0.0.0.0' ? '127.0.0.1' : place.listen}:${place.port}/api/ready`)
+  stops.push(() => server.stop())
+  server.onExit(() => end(stopping ? 0 : 1))
+  database.onExit(() => { if (!stopping) { say('The database ended by itself. Start again: it recovers.'); end(1) } })
+  await welcome(place)
+}
+
+/** On loopback without a mail server of one's own, letters go to the catcher, to be read at /mail. */
+async function mailOf(place, folders) {
+  const own = process.env.NUXT_SMTP_URL
+  if (own || !place.isLocal) return { smtpUrl: own ?? '', url: '' }
+  const catcher = await startCatcher(folders.mail)
+  stops.push(() => catcher.stop())
+  return catcher
+}
+
+async function welcome(place) {
+  say(`\nThirdhand is at ${place.url}`)
+  if (place.isLocal) say(await step('scripts/demo-people.ts', [], {}, true))
+  say('Ctrl-C stops it.')
+}
+
+async function end(code) {
+  await stopAll().catch(error => say(String(error.message ?? error)))
+  process.exit(code)
+}
+
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => end(0))
+main().catch(async (error) => {
+  say(error instanceof Trouble ? error.message : `Something went wrong: ${error.stack ?? error}`)
+  await end(1)
+})
