@@ -1,6 +1,31 @@
-// @ts-check
 import withNuxt from './.nuxt/eslint.config.mjs'
 
+/** Imports run one way: app -> shared <- server; within shared: trade <- lesson <- bench <- judging. */
+const never = (...groups) => ({ 'no-restricted-imports': ['error', { patterns: groups.map(([group, message]) => ({ group, message })) }] })
+const FRAMEWORK = [['vue', 'vue-router', 'pinia', '@vueuse/*', 'nuxt', 'nuxt/*', '#app', '#app/*', '#imports', 'h3', 'nitropack', 'drizzle-orm', 'drizzle-orm/*', 'mysql2', 'mysql2/*', 'node:*'], 'shared/ is plain TypeScript: no framework, no database, no Node.']
+const OUT = [['#server/*', '~/*', '@/*', '**/server/**', '**/app/**'], 'shared/ imports neither app nor server.']
+const up = (...areas) => [areas.flatMap(area => [`**/${area}/*`, `#shared/${area}/*`]), 'Within shared imports run one way: trade <- lesson <- bench <- judging.']
+
 export default withNuxt(
-  // Your custom configs here
+  { ignores: ['drizzle/**', 'content-src/**', '.output*/**', '.nuxt*/**', '.data*/**'] },
+  {
+    rules: {
+      '@typescript-eslint/no-explicit-any': 'error',
+      '@typescript-eslint/no-unused-vars': ['error', { argsIgnorePattern: '^_', varsIgnorePattern: '^_', caughtErrors: 'none', ignoreRestSiblings: true }],
+      '@typescript-eslint/unified-signatures': 'off',
+      'vue/multi-word-component-names': 'off',
+      'vue/html-self-closing': 'off',
+      'vue/no-v-html': 'error',
+      'vue/no-multiple-template-root': 'off',
+      'no-restricted-syntax': ['error',
+        { selector: 'MemberExpression[object.name="sql"][property.name="raw"]', message: 'SQL is never put together from text.' },
+        { selector: 'MemberExpression[object.name=/^(db|tx)$/][property.name="query"]', message: 'Relational queries do not work on this database. Write a select with joins.' }],
+    },
+  },
+  { files: ['app/**'], rules: never([['#server/*', '**/server/**'], 'The application never imports the server.']) },
+  { files: ['server/**'], rules: never([['~/*', '@/*', '**/app/**'], 'The server never imports the application.']) },
+  { files: ['shared/**'], rules: never(FRAMEWORK, OUT) },
+  { files: ['shared/trade/**'], rules: never(FRAMEWORK, OUT, up('lesson', 'bench', 'judging')) },
+  { files: ['shared/lesson/**'], rules: never(FRAMEWORK, OUT, up('bench', 'judging')) },
+  { files: ['shared/bench/**'], rules: never(FRAMEWORK, OUT, up('judging')) },
 )
