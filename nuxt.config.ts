@@ -25,6 +25,8 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' }],
     },
   },
+  // The pages ask /api/me; what the cookie holds is for the server alone.
+  auth: { loadStrategy: 'none' },
   runtimeConfig: {
     databaseUrl: '',
     smtpUrl: '',
@@ -33,9 +35,11 @@ export default defineNuxtConfig({
     filesDir: '.data/files',
     // '1' only where the caught mail may be read: on loopback, with the local catcher.
     catcherUrl: '',
+    // Set in tests only: requests may carry the time it is to be.
+    testClock: '',
     // log2 of the scrypt cost. 17 is what is shipped; tests set less.
     scryptLog2: 17,
-    session: { name: 'thirdhand', password: '', maxAge: 60 * 60 * 24 * 30, sessionHeader: false, cookie: { sameSite: 'lax' } },
+    session: { name: '__Host-thirdhand', password: '', maxAge: 60 * 60 * 24 * 30, sessionHeader: false, cookie: { sameSite: 'lax' } },
   },
   routeRules: {
     '/bench/**': { ssr: false },
