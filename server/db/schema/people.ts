@@ -1,5 +1,5 @@
 import { foreignKey, index, int, json, mysqlEnum, mysqlTable, primaryKey, tinyint, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
-import { GROUNDS, HANDS, MAIL_KINDS, MAIL_STATES, TOKEN_KINDS } from '../../../shared/schemas/lists'
+import { type AgeBand, GROUNDS, HANDS, MAIL_KINDS, MAIL_STATES, type Role, TOKEN_KINDS } from '../../../shared/schemas/lists'
 import { moment, sha, ulid } from './columns'
 
 export const people = mysqlTable('people', {
@@ -36,11 +36,16 @@ export const sessions = mysqlTable('sessions', {
   lastSeen: moment('last_seen').notNull(),
   ends: moment('ends').notNull(),
   revokedAt: moment('revoked_at'),
+  /** Begun with a start card of this studio: opens no other, and no account. */
+  cardStudio: ulid('card_studio'),
   agent: varchar('agent', { length: 200 }).notNull().default(''),
 }, t => [
   index('i_sessions_person').on(t.personId),
   foreignKey({ name: 'fk_sessions_person', columns: [t.personId], foreignColumns: [people.id] }),
 ])
+
+/** A place in a studio as it is offered by mail. */
+export interface Offer { name: string, roles: Role[], ageBand: AgeBand, classId: string | null, by: string }
 
 export const tokens = mysqlTable('tokens', {
   id: ulid('id').primaryKey(),
@@ -51,6 +56,8 @@ export const tokens = mysqlTable('tokens', {
   studioId: ulid('studio_id'),
   ends: moment('ends').notNull(),
   usedAt: moment('used_at'),
+  /** What an invitation offers; nothing of it is so until it is taken. */
+  offer: json('offer').$type<Offer>(),
 }, t => [uniqueIndex('u_tokens_hash').on(t.hash)])
 
 /** Tries by account or address (hashed): a limit on guessing that survives a restart. */
