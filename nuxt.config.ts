@@ -43,6 +43,10 @@ export default defineNuxtConfig({
   },
   routeRules: {
     '/bench/**': { ssr: false },
+    // What is typed and not sent lies on the device, so the desk begins there.
+    '/lessons/*/write': { ssr: false },
+    // A photograph for a lesson comes as it is; the handler counts its bytes.
+    '/api/lessons/*/pictures': { security: { requestSizeLimiter: { maxRequestSizeInBytes: 32_100_000 } } },
     '/api/**': { headers: { 'cache-control': 'no-store' } },
   },
   security: {

@@ -59,8 +59,9 @@ export async function saveDraft(db: Db, who: Actor, address: string, { etag, sou
   if (!('draft' in kept)) return kept
   const { draft } = kept
   const by = (await namesOf(db, [draft.savedBy])).get(draft.savedBy) ?? 'Another'
-  refuse(409, `${by} kept another text of this lesson since you began. Nothing of yours is lost: choose which to go on with.`,
-    { by, at: draft.savedAt.toISOString(), source: draft.source, etag: draft.etag })
+  const isMine = draft.savedBy === who.personId
+  refuse(409, `${isMine ? 'You' : by} kept another text of this lesson${isMine ? ' elsewhere' : ''} since this one was begun. Nothing is lost: choose which to go on with.`,
+    { by, isMine, at: draft.savedAt.toISOString(), source: draft.source, etag: draft.etag })
 }
 
 /** Makes a text the draft, whatever was there: for what comes by import. */

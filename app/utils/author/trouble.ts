@@ -1,7 +1,7 @@
 /** Why a text was not kept by the studio, as the writing page tells it. */
 import { z } from 'zod'
 
-export const ConflictSchema = z.object({ by: z.string(), at: z.string(), source: z.string(), etag: z.string() })
+export const ConflictSchema = z.object({ by: z.string(), isMine: z.boolean(), at: z.string(), source: z.string(), etag: z.string() })
 export type Conflict = z.infer<typeof ConflictSchema>
 
 export type Trouble =
@@ -13,6 +13,7 @@ const AnswerSchema = z.object({
   statusCode: z.number().optional(),
   data: z.object({ message: z.string().optional(), data: z.unknown().optional() }).optional(),
 })
+const FieldsSchema = z.object({ fieldErrors: z.record(z.string(), z.array(z.string())) })
 const NOT_KEPT = 'The studio did not keep this text. It is kept on this tablet.'
 
 /**
@@ -27,7 +28,8 @@ export function troubleOf(error: unknown): Trouble {
   const conflict = status === 409 ? ConflictSchema.safeParse(body?.data) : null
   if (conflict?.success) return { kind: 'other', conflict: conflict.data }
   if (status === undefined || status === 429 || status >= 500) return { kind: 'away' }
-  return { kind: 'refused', says: body?.message ?? NOT_KEPT }
+  const fields = status === 400 ? FieldsSchema.safeParse(body?.data) : null
+  return { kind: 'refused', says: (fields?.success && Object.values(fields.data.fieldErrors).flat()[0]) || (body?.message ?? NOT_KEPT) }
 }
 
 /** One sentence for a press that did not come through. `keeps` says what became of what was typed. */
