@@ -1,6 +1,7 @@
 import { and, eq, inArray } from 'drizzle-orm'
 import { canonical } from '../../shared/lesson/canonical'
-import { BatchSchema, type BenchEvent, EVENT_KINDS, EVENT_VERSION, type EventOf, HeadSchema, readEvent, shaOfEvent } from '../../shared/bench/events'
+import type { BatchSchema, BenchEvent, EventOf} from '../../shared/bench/events';
+import { EVENT_KINDS, EVENT_VERSION, HeadSchema, readEvent, shaOfEvent } from '../../shared/bench/events'
 import type { z } from 'zod'
 import { inTransaction } from '../db/transaction'
 import type { Db, Tx } from '../db/client'

@@ -24,7 +24,7 @@ export const PART_FIELDS = ['key', 'repeat', 'say', 'order', 'when', 'stop']
 export const STEP_FIELDS = ['key', 'repeat', 'say', 'when', 'stop', 'one_act', 'heat', 'usual', 'needs', 'instead']
 const isKeyword = (word: string): word is Keyword => (KEYWORDS as readonly string[]).includes(word)
 const blank = (line: Line | undefined): boolean => line === undefined || /^\s*$/.test(line.text)
-const indented = (line: Line | undefined): boolean => line !== undefined && /^(  |\t)/.test(line.text)
+const indented = (line: Line | undefined): boolean => line !== undefined && /^( {2}|\t)/.test(line.text)
 
 export function linesOf(source: string, from: number): Line[] {
   const lines: Line[] = []
