@@ -18,7 +18,7 @@ export async function requirePerson(event: H3Event): Promise<Who> {
 
 /** What the sealed cookie says, or null. Does not make a session where there is none. */
 async function sessionKey(event: H3Event): Promise<SessionKey | null> {
-  if (!getCookie(event, useRuntimeConfig(event).session.name)) return null
+  if (!getCookie(event, useRuntimeConfig(event).session.name ?? 'nuxt-session')) return null
   const { secure } = await getUserSession(event)
   return secure ?? null
 }

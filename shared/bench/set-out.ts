@@ -5,6 +5,7 @@ import { isRight, isWithin, limitsOf } from './answers'
 import type { EventOf, PieceStarted } from './events'
 import { plan, type Turn } from './plan'
 import { scopeOf } from './scope'
+import type { Reason } from './reasons'
 import type { State } from './state'
 
 /** A lesson set out for one piece: its turns, and how to find one. */

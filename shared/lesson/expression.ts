@@ -4,7 +4,8 @@ import { nearNames, orNear, type Code } from './findings'
 import { FUNCTION_TABLE } from './functions'
 import { FIGURE_UNITS, FUNCTIONS, type FunctionName, type Node } from './schema'
 
-const { parse } = create({ parseDependencies })
+// The package's own types call this optional; it is always there.
+const { parse } = create(parseDependencies ? { parseDependencies } : {})
 
 export const LONGEST_EXPRESSION = 300
 export const DEEPEST = 20

@@ -17,15 +17,16 @@ export interface Context { source: string, lesson: Lesson, sighted: Sighted, fin
 export type Rule = (context: Context) => void
 
 /** All inline text of a step by what it is, for rules about words. */
-export function textsOf(step: Step): { text: readonly (Inline | Block)[], what: 'title' | 'text' | 'aside' | 'choice' | 'fault' | 'safety', at: Place }[] {
+export interface TextHere { text: readonly (Inline | Block)[], what: 'title' | 'text' | 'aside' | 'choice' | 'fault' | 'safety', at: Place }
+export function textsOf(step: Step): TextHere[] {
   const at = step.range
   return [
     { text: step.title, what: 'title', at }, { text: step.text, what: 'text', at },
     ...step.safety.flatMap(note => [{ text: note.hazard, what: 'safety' as const, at: note.range }, { text: note.avoid, what: 'safety' as const, at: note.range }]),
     ...step.holds.flatMap(hold => [{ text: hold.consequence, what: 'aside' as const, at: hold.range }, { text: hold.text, what: 'aside' as const, at: hold.range }, { text: hold.wrong ?? [], what: 'fault' as const, at: hold.range },
-      ...hold.asks.flatMap(ask => ask.kind === 'choices' ? choiceTexts(ask, hold.range) : ask.kind === 'count' ? [{ text: ask.question, what: 'aside' as const, at: hold.range }] : ask.kind === 'photo' ? [{ text: ask.prompt, what: 'aside' as const, at: hold.range }] : [])]),
+      ...hold.asks.flatMap((ask): TextHere[] => ask.kind === 'choices' ? choiceTexts(ask, hold.range) : ask.kind === 'count' ? [{ text: ask.question, what: 'aside' as const, at: hold.range }] : ask.kind === 'photo' ? [{ text: ask.prompt, what: 'aside' as const, at: hold.range }] : [])]),
     ...step.checks.flatMap(check => choiceTexts(check, check.range)),
-    ...step.faults.flatMap(fault => [fault.sees, fault.because, fault.do].map(text => ({ text, what: 'fault' as const, at: fault.range }))),
+    ...step.faults.flatMap((fault): TextHere[] => [fault.sees, fault.because, fault.do].map(text => ({ text, what: 'fault' as const, at: fault.range }))),
     ...[...step.why, ...step.feel].map(aside => ({ text: aside.text, what: 'aside' as const, at: aside.range })),
     ...step.readings.map(reading => ({ text: reading.text, what: 'aside' as const, at: reading.range })), ...step.photos.map(photo => ({ text: photo.prompt, what: 'aside' as const, at: photo.range })),
     ...step.waits.map(wait => ({ text: wait.why ?? [], what: 'aside' as const, at: wait.range })), ...step.pictures.map(picture => ({ text: picture.alt, what: 'aside' as const, at: picture.range })),
@@ -33,6 +34,6 @@ export function textsOf(step: Step): { text: readonly (Inline | Block)[], what: 
   ]
 }
 
-function choiceTexts(of: { question: readonly Block[], choices: readonly { says: Inline[], fault: Inline[] | null, range: Place }[] }, at: Place) {
-  return [{ text: of.question, what: 'aside' as const, at }, ...of.choices.flatMap(choice => [{ text: choice.says, what: 'choice' as const, at: choice.range }, { text: choice.fault ?? [], what: 'fault' as const, at: choice.range }])]
+function choiceTexts(of: { question: readonly Block[], choices: readonly { says: Inline[], fault: Inline[] | null, range: Place }[] }, at: Place): TextHere[] {
+  return [{ text: of.question, what: 'aside' as const, at }, ...of.choices.flatMap((choice): TextHere[] => [{ text: choice.says, what: 'choice' as const, at: choice.range }, { text: choice.fault ?? [], what: 'fault' as const, at: choice.range }])]
 }
