@@ -1,4 +1,4 @@
-import { and, eq } from 'drizzle-orm'
+import { and, eq, ne } from 'drizzle-orm'
 import { foundingReasons, secondNameReasons } from '../../shared/judging/names'
 import type { Db, Tx } from '../db/client'
 import { signOffPieces, signOffs } from '../db/schema/judging'
@@ -44,12 +44,17 @@ async function secondNameIn(tx: Tx, who: Actor, signOffId: string, id: string, n
   return { row, needsSecondName: false, isNew: true }
 }
 
-/** A level 5 given by the manager where nobody holds one, so that somebody can sign first. Shown as such for ever. */
-export async function founding(db: Db, who: Actor, given: { id: string, person: string, lesson: string }, now: Date): Promise<SignedOnce> {
+/**
+ * A level 5 (or 4, for who gives second names) given by the manager where nobody holds 5, or before anyone was signed in the
+ * lesson, so that somebody can sign first. Shown as such for ever.
+ */
+export async function founding(db: Db, who: Actor, given: Founded, now: Date): Promise<SignedOnce> {
   return await onlyOnce(db, who, given.id, tx => foundingIn(tx, who, given, now))
 }
 
-async function foundingIn(tx: Tx, who: Actor, { id, person, lesson }: { id: string, person: string, lesson: string }, now: Date): Promise<SignedOnce> {
+export interface Founded { id: string, person: string, lesson: string, level?: 4 | 5 }
+
+async function foundingIn(tx: Tx, who: Actor, { id, person, lesson, level = 5 }: Founded, now: Date): Promise<SignedOnce> {
   // Two founding levels of one lesson at once: the lesson's row is the lock.
   const [row] = await tx.select({ revision: lessons.currentRevision }).from(lessons).where(and(eq(lessons.studioId, who.studioId), eq(lessons.id, lesson))).for('update')
   const revisionId = found(row).revision
@@ -60,8 +65,14 @@ async function foundingIn(tx: Tx, who: Actor, { id, person, lesson }: { id: stri
   const [member] = await tx.select({ roles: memberships.roles, leftAt: memberships.leftAt }).from(memberships).where(and(eq(memberships.studioId, who.studioId), eq(memberships.personId, person)))
   const holder = found(member)
   const names = await currentNames(tx, [person])
-  const reasons = foundingReasons({ roles: who.roles, holder: { name: nameIn(names, person), roles: holder.leftAt ? [] : holder.roles }, isHeld: (await lessonsHeld(tx, who.studioId, now)).has(lesson) })
+  const reasons = foundingReasons({ roles: who.roles, holder: { name: nameIn(names, person), roles: holder.leftAt ? [] : holder.roles }, isHeld: await isTaught(tx, who, lesson) && (await lessonsHeld(tx, who.studioId, now)).has(lesson) })
   const [reason] = reasons
   if (reason) refuse(reason.code === 'not-manager' ? 403 : 422, reason.says, { reasons })
-  return { row: await writeSignOff(tx, who, { id, of: id, kind: 'founding', personId: person, lessonId: lesson, revisionId, level: 5, byLevel: 0, judgements: [], words: '' }, now), needsSecondName: false, isNew: true }
+  return { row: await writeSignOff(tx, who, { id, of: id, kind: 'founding', personId: person, lessonId: lesson, revisionId, level, byLevel: 0, judgements: [], words: '' }, now), needsSecondName: false, isNew: true }
+}
+
+/** Was anybody signed in this lesson by someone who teaches it? */
+async function isTaught(tx: Tx, who: Actor, lesson: string): Promise<boolean> {
+  const rows = await tx.select({ id: signOffs.id }).from(signOffs).where(and(eq(signOffs.studioId, who.studioId), eq(signOffs.lessonId, lesson), ne(signOffs.kind, 'founding'))).limit(1)
+  return rows.length > 0
 }

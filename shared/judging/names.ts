@@ -23,11 +23,11 @@ export interface FoundingFacts {
   roles: readonly Role[]
   /** Roles here of the person who would hold it. */
   holder: { name: string, roles: readonly Role[] }
-  /** Does anybody hold 5 in the lesson today? */
+  /** Does anybody hold 5 in the lesson today, and was anybody signed in it yet? A studio founds its first teachers together. */
   isHeld: boolean
 }
 
-/** What keeps a manager from giving a founding 5: one person must be able to sign first, and it is shown as such for ever. */
+/** What keeps a manager from giving a founding level: somebody must be able to sign first, and it is shown as such for ever. */
 export function foundingReasons({ roles, holder, isHeld }: FoundingFacts): Reason[] {
   const reasons: Reason[] = []
   if (!may(roles, 'found')) reasons.push({ code: 'not-manager', says: 'A founding level is given by the manager.' })

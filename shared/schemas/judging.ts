@@ -37,7 +37,7 @@ export type SignItem = z.output<typeof SignItemSchema>
 const PasswordSchema = z.string().min(1, 'Say your password.').max(200)
 export const SignBodySchema = z.strictObject({ password: PasswordSchema, items: z.array(SignItemSchema).min(1, 'There is nothing to sign.').max(40) })
 export const SecondNameBodySchema = z.strictObject({ id: UlidSchema, password: PasswordSchema })
-export const FoundingBodySchema = z.strictObject({ id: UlidSchema, person: UlidSchema, lesson: UlidSchema, password: PasswordSchema })
+export const FoundingBodySchema = z.strictObject({ id: UlidSchema, person: UlidSchema, lesson: UlidSchema, level: z.union([z.literal(4), z.literal(5)]).default(5), password: PasswordSchema })
 
 export const PersonParamsSchema = z.strictObject({ person: UlidSchema })
 /** An act on a permission: the reason is asked for all but giving it. */
