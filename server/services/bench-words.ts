@@ -1,7 +1,7 @@
 import { placeNow } from '../../shared/bench/screen'
 import { setOut, type SetOut, type State } from '../../shared/bench/machine'
 import { scopeAt, stepOf } from '../../shared/bench/set-out'
-import { wordsOf } from '../../shared/lesson/plain'
+import { plainText } from '../../shared/lesson/plain'
 import type { Inline, Lesson } from '../../shared/lesson/schema'
 import { shownValue } from '../../shared/lesson/shown'
 
@@ -9,7 +9,7 @@ import { shownValue } from '../../shared/lesson/shown'
 function reads(set: SetOut, address: string, line: readonly Inline[]): string {
   const turn = set.turns[set.at.get(address) ?? -1]
   const scope = turn ? scopeAt(set, turn) : set.scope
-  return wordsOf(line, (name, to) => { const value = scope[name]; return value ? shownValue(value, 'mm', to) : '' })
+  return plainText(line, (name, to) => { const value = scope[name]; return value ? shownValue(value, 'mm', to) : '' })
 }
 
 export interface InHand {

@@ -48,16 +48,15 @@ export async function readDraft(db: Db, { studioId, personId }: Actor, address: 
  */
 export async function saveDraft(db: Db, who: Actor, address: string, { etag, source }: DraftBody, now: Date): Promise<{ etag: string, savedAt: string }> {
   const { id } = await lessonOf(db, who.studioId, address)
-  const kept = await inTransaction(db, async (tx) => {
+  const { kept, draft } = await inTransaction(db, async (tx) => {
     const draft = await draftOf(tx, who.studioId, id, true)
-    if (draft.source === source) return { etag: draft.etag, savedAt: draft.savedAt.toISOString() }
-    if (draft.etag !== etag) return { draft }
+    if (draft.source === source) return { kept: { etag: draft.etag, savedAt: draft.savedAt.toISOString() }, draft }
+    if (draft.etag !== etag) return { kept: null, draft }
     const next = { etag: ulid(now.getTime()), savedAt: now }
     await tx.update(drafts).set({ source, savedBy: who.personId, ...next }).where(and(eq(drafts.studioId, who.studioId), eq(drafts.id, draft.id)))
-    return { etag: next.etag, savedAt: now.toISOString() }
+    return { kept: { etag: next.etag, savedAt: now.toISOString() }, draft }
   })
-  if (!('draft' in kept)) return kept
-  const { draft } = kept
+  if (kept) return kept
   const by = (await namesOf(db, [draft.savedBy])).get(draft.savedBy) ?? 'Another'
   const isMine = draft.savedBy === who.personId
   refuse(409, `${isMine ? 'You' : by} kept another text of this lesson${isMine ? ' elsewhere' : ''} since this one was begun. Nothing is lost: choose which to go on with.`,
