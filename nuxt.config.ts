@@ -16,6 +16,7 @@ export default defineNuxtConfig({
   experimental: { componentIslands: false },
   typescript: { strict: true, tsConfig: { compilerOptions: { noUncheckedIndexedAccess: true } } },
   components: [{ path: '~/components', pathPrefix: false }],
+  tailwindcss: { cssPath: ['~/assets/css/tailwind.css', { injectPosition: 'first' }], viewer: false },
   css: ['@fontsource/atkinson-hyperlegible/400.css', '@fontsource/atkinson-hyperlegible/700.css'],
   app: {
     head: {

@@ -1,0 +1,36 @@
+import type { Ref } from 'vue'
+
+/**
+ * A form's draft that outlives a closed tab, an ended session and a lost network: kept on this device until it is sent.
+ * `key` names the form, `make` an empty one. `forget` clears it and begins anew.
+ */
+export function useKept<T extends object>(key: () => string, make: () => T): { value: Ref<T>, forget: () => void } {
+  const value = ref(make()) as Ref<T>
+  const place = () => `kept:${key()}`
+  const read = () => {
+    try {
+      const text = localStorage.getItem(place())
+      return text === null ? null : JSON.parse(text) as Partial<T>
+    }
+    catch {
+      return null
+    }
+  }
+  onMounted(() => {
+    const kept = read()
+    if (kept) value.value = { ...value.value, ...kept }
+    watch(value, (now) => {
+      try {
+        localStorage.setItem(place(), JSON.stringify(now))
+      }
+      catch { /* A full or closed store keeps nothing; what is on the page stays. */ }
+    }, { deep: true })
+  })
+  return {
+    value,
+    forget() {
+      value.value = make()
+      nextTick(() => localStorage.removeItem(place()))
+    },
+  }
+}
