@@ -36,11 +36,13 @@ export default defineNuxtConfig({
     filesDir: '.data/files',
     // '1' only where the caught mail may be read: on loopback, with the local catcher.
     catcherUrl: '',
+    // How many proxies of our own stand in front; 0 trusts no X-Forwarded-For.
+    proxyHops: 0,
     // Set in tests only: requests may carry the time it is to be.
     testClock: '',
     // log2 of the scrypt cost. 17 is what is shipped; tests set less.
     scryptLog2: 17,
-    session: { name: '__Host-thirdhand', password: '', maxAge: 60 * 60 * 24 * 30, sessionHeader: false, cookie: { sameSite: 'lax' } },
+    session: { name: 'thirdhand', password: '', maxAge: 60 * 60 * 24 * 30, sessionHeader: false, cookie: { sameSite: 'lax', secure: true } },
   },
   routeRules: {
     '/bench/**': { ssr: false },

@@ -39,7 +39,7 @@ async function main() {
   await build('.output', '.nuxt')
   const server = await startServer('.output', {
     NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: process.env.NUXT_SESSION_PASSWORD ?? secrets.session, NUXT_SMTP_URL: mail.smtpUrl, NUXT_CATCHER_URL: mail.url, NUXT_PUBLIC_URL: place.url, NUXT_FILES_DIR: folders.files,
-    NITRO_PORT: String(place.port), NITRO_HOST: place.listen, PORT: String(place.port), HOST: place.listen, ...place.isLocal ? { NUXT_SESSION_COOKIE_SECURE: 'false' } : {},
+    NITRO_PORT: String(place.port), NITRO_HOST: place.listen, PORT: String(place.port), HOST: place.listen, ...place.isLocal ? { NUXT_SESSION_COOKIE_SECURE: 'false' } : { NUXT_SESSION_NAME: '__Host-thirdhand' },
   }, `http${process.env.NITRO_SSL_CERT ? 's' : ''}://${place.listen === '0.0.0.0' ? '127.0.0.1' : place.listen}:${place.port}/api/ready`)
   stops.push(() => server.stop())
   server.onExit(() => end(stopping ? 0 : 1))

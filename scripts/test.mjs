@@ -83,7 +83,7 @@ async function withStudio(database, work) {
   const secrets = secretsOf(folders)
   const server = await startServer(OUTPUT, {
     NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: secrets.session, NUXT_SMTP_URL: catcher.smtpUrl, NUXT_CATCHER_URL: catcher.url, NUXT_PUBLIC_URL: url, NUXT_FILES_DIR: files, NUXT_SCRYPT_LOG2: '12',
-    NITRO_PORT: String(port), NITRO_HOST: '127.0.0.1', PORT: String(port), HOST: '127.0.0.1', NUXT_SESSION_COOKIE_SECURE: 'false',
+    NITRO_PORT: String(port), NITRO_HOST: '127.0.0.1', PORT: String(port), HOST: '127.0.0.1', NUXT_SESSION_COOKIE_SECURE: 'false', NUXT_TEST_CLOCK: '1',
   }, `http://127.0.0.1:${port}/api/ready`)
   try {
     return await work({ TEST_BASE_URL: url, TEST_DATABASE_URL: database.app, TEST_OWNER_URL: database.owner, TEST_CATCHER_URL: catcher.url, TEST_FILES_DIR: files })

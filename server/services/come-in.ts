@@ -1,8 +1,8 @@
-import { eq } from 'drizzle-orm'
+import { and, eq, isNull } from 'drizzle-orm'
 import { ulid } from 'ulid'
 import type { Db } from '../db/client'
 import { people, securityLog } from '../db/schema/people'
-import { countTry, forgetTries } from './attempts'
+import { countTry, forgetTries, giveBackTry } from './attempts'
 import type { Passwords } from './passwords'
 import { refuse } from './refuse'
 import { openSession, type SessionKey } from './sessions'
@@ -21,20 +21,29 @@ export async function passwordHashOf(db: Db, personId: string): Promise<string |
 }
 
 /** Comes in by e-mail and password. The same work is done and the same is said whether or not the e-mail is known. */
-export async function comeIn({ db, passwords, address, agent, now }: Door, email: string, password: string): Promise<SessionKey> {
+export async function comeIn(door: Door, email: string, password: string): Promise<SessionKey> {
+  const { db, address, agent, now } = door
   const key = emailKey(email)
-  await countTry(db, 'address', address, now)
-  await countTry(db, 'account', key, now)
-  const [person] = await db.select({ id: people.id, hash: people.passwordHash, erasedAt: people.erasedAt }).from(people).where(eq(people.emailKey, key))
-  const right = await passwords.check(person && !person.erasedAt ? person.hash : null, password)
-  if (!person || !right) {
-    await noteSecurity(db, null, address, 'come-in-refused', now)
+  const [person] = await db.select({ id: people.id, hash: people.passwordHash }).from(people).where(and(eq(people.emailKey, key), isNull(people.erasedAt)))
+  if (!await rightPassword(door, key, person?.hash ?? null, password) || !person) {
+    await noteSecurity(db, person?.id ?? null, address, 'come-in-refused', now)
     refuse(401, NOT_KNOWN)
   }
-  await forgetTries(db, 'account', key)
-  if (person.hash && passwords.isOld(person.hash)) await db.update(people).set({ passwordHash: await passwords.make(password) }).where(eq(people.id, person.id))
   await noteSecurity(db, person.id, address, 'come-in', now)
   return await openSession(db, person.id, agent, now)
+}
+
+/** Counts the try, does the work, and forgets the count where it was right; hashes again where the numbers have changed. */
+export async function rightPassword({ db, passwords, address, now }: Door, key: string, hash: string | null, password: string): Promise<boolean> {
+  await countTry(db, 'address', address, now)
+  await countTry(db, 'anywhere', key, now)
+  await countTry(db, 'account', `${key} ${address}`, now)
+  if (!await passwords.check(hash, password)) return false
+  await giveBackTry(db, 'address', address)
+  await forgetTries(db, 'anywhere', key)
+  await forgetTries(db, 'account', `${key} ${address}`)
+  if (hash && passwords.isOld(hash)) await db.update(people).set({ passwordHash: await passwords.make(password) }).where(and(eq(people.emailKey, key), eq(people.passwordHash, hash)))
+  return true
 }
 
 /** A line for whoever looks after the studio: who, from where, what. Holds no secret. */

@@ -4,7 +4,7 @@ import { ulid } from 'ulid'
 import { sha256 } from '../../shared/lesson/canonical'
 import type { TOKEN_KINDS } from '../../shared/schemas/lists'
 import type { DbOrTx, Tx } from '../db/client'
-import { tokens } from '../db/schema/people'
+import { type Offer, tokens } from '../db/schema/people'
 
 type TokenKind = (typeof TOKEN_KINDS)[number]
 export interface TokenFor { kind: TokenKind, personId: string | null, emailKey: string | null, studioId: string | null, ends: Date }
@@ -13,15 +13,26 @@ export interface TokenFor { kind: TokenKind, personId: string | null, emailKey: 
 const CARD_LETTERS = '23456789BCDFGHJKMNPQRSTVWXZ'
 const CARD_LENGTH = 8
 
-/** A secret of 256 bits for a mailed link. Only its hash is kept. */
-export async function makeToken(tx: DbOrTx, about: TokenFor, now: Date): Promise<string> {
-  const secret = randomBytes(32).toString('base64url')
-  await tx.insert(tokens).values({ id: ulid(now.getTime()), hash: sha256(secret), ...about })
-  return secret
+const secretOf = (): string => randomBytes(32).toString('base64url')
+
+/** A token for a mailed link. Its secret is made when the letter is written, so that no table ever holds one. False for a repeat of the same id. */
+export async function openToken(tx: Tx, id: string, about: TokenFor & { offer?: Offer }): Promise<boolean> {
+  const [there] = await tx.select({ id: tokens.id }).from(tokens).where(eq(tokens.id, id))
+  if (there) return false
+  await tx.insert(tokens).values({ id, hash: sha256(secretOf()), ...about })
+  return true
 }
 
-/** A start card's code, as BDFG-2345: 27^8 of them, good for one evening, and tries at it are counted. */
-export async function makeCard(tx: DbOrTx, about: Omit<TokenFor, 'kind'>, now: Date): Promise<string> {
+/** A secret of 256 bits for this link, in place of any earlier one, or null where the link is used up or too old. Only its hash is kept. */
+export async function freshSecret(db: DbOrTx, id: string, now: Date): Promise<string | null> {
+  const secret = secretOf()
+  const [done] = await db.update(tokens).set({ hash: sha256(secret) }).where(and(eq(tokens.id, id), isNull(tokens.usedAt), gt(tokens.ends, now)))
+  return done.affectedRows === 1 ? secret : null
+}
+
+/** A start card's code, as BDFG-2345: 27^8 of them, good for one evening, and tries at it are counted. An earlier card of the person here ends. */
+export async function makeCard(tx: DbOrTx, about: { personId: string, studioId: string, ends: Date }, now: Date): Promise<string> {
+  await tx.update(tokens).set({ usedAt: now }).where(and(eq(tokens.kind, 'card'), eq(tokens.personId, about.personId), eq(tokens.studioId, about.studioId), isNull(tokens.usedAt)))
   const letters = Array.from({ length: CARD_LENGTH }, () => CARD_LETTERS[randomInt(CARD_LETTERS.length)]).join('')
   await tx.insert(tokens).values({ id: ulid(now.getTime()), kind: 'card', hash: sha256(`card ${letters}`), ...about })
   return `${letters.slice(0, 4)}-${letters.slice(4)}`

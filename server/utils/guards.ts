@@ -17,8 +17,8 @@ export async function requirePerson(event: H3Event): Promise<Who> {
 }
 
 /** What the sealed cookie says, or null. Does not make a session where there is none. */
-async function sessionKey(event: H3Event): Promise<SessionKey | null> {
-  if (!getCookie(event, useRuntimeConfig(event).session.name ?? 'nuxt-session')) return null
+export async function sessionKey(event: H3Event): Promise<SessionKey | null> {
+  if (!getCookie(event, useRuntimeConfig(event).session.name ?? '')) return null
   const { secure } = await getUserSession(event)
   return secure ?? null
 }
@@ -26,7 +26,7 @@ async function sessionKey(event: H3Event): Promise<SessionKey | null> {
 /** Proves that the person is in the studio they have in hand, with the roles they hold at this moment. */
 export async function requireStudio(event: H3Event): Promise<StudioWho> {
   const who = await requirePerson(event)
-  const studios = await studiosOf(useDatabase(), who.personId)
+  const studios = await studiosOf(useDatabase(), who.personId, who.cardStudio)
   const studio = studios.find(one => one.id === who.studioId) ?? studios[0]
   if (!studio) refuse(403, 'You are in no studio at present. Ask your studio to invite you.')
   const { roles, ...about } = studio

@@ -12,8 +12,11 @@ export const NewPasswordSchema = z.string().min(8, 'At least 8 letters.').max(20
 
 export const ComeInBodySchema = z.strictObject({ email: EmailSchema, password: z.string().min(1, 'Missing: password.').max(200) })
 export const CardBodySchema = z.strictObject({ code: z.string().trim().min(1, 'Missing: the code on your card.').max(20) })
-export const ForgottenBodySchema = z.strictObject({ email: EmailSchema })
-export const TokenParamsSchema = z.strictObject({ token: z.string().regex(/^[A-Za-z0-9_-]{43}$/) })
-export const TokenBodySchema = z.strictObject({ name: z.string().trim().min(1, 'Missing: your name.').max(120).optional(), password: NewPasswordSchema })
+const LinkSchema = z.string().regex(/^[A-Za-z0-9_-]{43}$/, 'This link is not whole. Open it from the letter again.')
+export const LinkBodySchema = z.strictObject({ token: LinkSchema })
+/** The answer to a mailed link. A password that is new is measured by the new password's rules. */
+export const AnswerBodySchema = z.strictObject({ token: LinkSchema, name: z.string().trim().min(1, 'Missing: your name.').max(120).optional(), password: z.string().min(1, 'Missing: password.').max(200) })
+export const NewAnswerBodySchema = AnswerBodySchema.extend({ password: NewPasswordSchema })
+export const EmailBodySchema = z.strictObject({ email: EmailSchema })
 export const StudioBodySchema = z.strictObject({ studioId: UlidSchema })
 export const MeBodySchema = z.strictObject({ hand: z.enum(HANDS), ground: z.enum(GROUNDS), textSize: z.number().int().min(100).max(400) }).partial()
