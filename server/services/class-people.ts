@@ -1,6 +1,6 @@
 import { and, desc, eq, isNull } from 'drizzle-orm'
 import { dayIn } from '../../shared/bench/day'
-import type { DbOrTx, Tx } from '../db/client'
+import type { DbOrTx } from '../db/client'
 import { classes, classPeople, memberships, studios } from '../db/schema/studio'
 import type { Actor } from './actor'
 import { found } from './refuse'
@@ -17,7 +17,7 @@ async function latestStay(tx: DbOrTx, who: Actor, classId: string, personId: str
 }
 
 /** Puts a person of the studio into a class from today on. Nothing happens where they are in it. */
-export async function putInClass(tx: Tx, who: Actor, classId: string, personId: string, now: Date): Promise<void> {
+export async function putInClass(tx: DbOrTx, who: Actor, classId: string, personId: string, now: Date): Promise<void> {
   const { today, latest } = await latestStay(tx, who, classId, personId, now)
   if (latest && (latest.untilOn === null || latest.untilOn >= today)) {
     await tx.update(classPeople).set({ untilOn: null }).where(stay(who, classId, personId, latest.fromOn))
@@ -27,7 +27,7 @@ export async function putInClass(tx: Tx, who: Actor, classId: string, personId: 
 }
 
 /** Takes a person out of a class: yesterday was their last day in it; who came today was never in it. */
-export async function takeOutOfClass(tx: Tx, who: Actor, classId: string, personId: string, now: Date): Promise<void> {
+export async function takeOutOfClass(tx: DbOrTx, who: Actor, classId: string, personId: string, now: Date): Promise<void> {
   const { today, latest } = await latestStay(tx, who, classId, personId, now)
   if (!latest || latest.untilOn !== null) return
   const here = stay(who, classId, personId, latest.fromOn)

@@ -8,8 +8,10 @@ export function refuse(statusCode: RefusalStatus, says: string, data?: Record<st
   throw createError({ statusCode, message: says, data })
 }
 
+export const NOT_HERE = 'There is nothing here, or it is not yours to see.'
+
 /** The row, or 404: the same sentence for what is not there and for what is another studio's. */
 export function found<T>(row: T | undefined | null): T {
-  if (row === undefined || row === null) refuse(404, 'There is nothing here, or it is not yours to see.')
+  if (row === undefined || row === null) refuse(404, NOT_HERE)
   return row
 }

@@ -1,7 +1,7 @@
 import type { H3Event } from 'h3'
 import { z } from 'zod'
 import { sentenceOf } from '#shared/schemas/sentences'
-import { found, refuse } from '#server/services/refuse'
+import { NOT_HERE, refuse } from '#server/services/refuse'
 
 const NOT_READ = 'Something here is missing or cannot be read.'
 const ONLY_JSON = 'This is sent as JSON.'
@@ -17,7 +17,8 @@ function checked<S extends z.ZodType>(schema: S, value: unknown): z.output<S> {
 /** The parts of the address. What is no id at all is not there: 404, as for what is another studio's. */
 export async function readParams<S extends z.ZodType>(event: H3Event, schema: S): Promise<z.output<S>> {
   const read = schema.safeParse(getRouterParams(event, { decode: true }))
-  return read.success ? read.data : found(null)
+  if (!read.success) refuse(404, NOT_HERE)
+  return read.data
 }
 
 /** What stands after the question mark. */

@@ -4,7 +4,7 @@ import { ulid } from 'ulid'
 import type { Lesson } from '../../../shared/lesson/schema'
 import type { Db } from '../client'
 import { inTransaction } from '../transaction'
-import { people } from '../schema/people'
+import { people, personNames } from '../schema/people'
 import { studios } from '../schema/studio'
 import type { Actor } from '../../services/actor'
 import { addLesson, makeClass } from '../../services/classes'
@@ -13,7 +13,9 @@ import { importLesson } from '../../services/import'
 import { readLesson } from '../../services/import-folder'
 import { putIntoUse } from '../../services/into-use'
 import { founding } from '../../services/names-under'
-import { actOnRole, invite, join, putInClass } from '../../services/people'
+import { putInClass } from '../../services/class-people'
+import { invite } from '../../services/invitations'
+import { actOnRole, join } from '../../services/people'
 import { found } from '../../services/refuse'
 import { compiledLesson } from '../../services/compiled'
 import { revisions } from '../schema/lessons'
@@ -23,7 +25,6 @@ import { CLASSES, type DemoPerson, emailOf, FOUNDED, LESSON_ORDER, type LessonSl
 import { madePhotographs, type Subject } from './photographs'
 import { demoPieces, type PlannedPiece } from './schedule'
 import { seededDraws } from './draws'
-import { personNames } from '../schema/people'
 
 const DAY = 86_400_000
 const SUBJECTS: Record<LessonSlug, Subject> = { 'bench-safety': 'board', 'jump-rings': 'rings', 'wrapped-loop-link': 'link', 'coiled-bead-cap': 'cap', 'hand-knotted-strand': 'strand' }
@@ -72,7 +73,7 @@ async function firstManager(demo: Demo, person: DemoPerson, at: Date, passwordHa
 }
 
 async function addPerson(demo: Demo, by: Actor, person: DemoPerson, at: Date, passwordHash: string): Promise<void> {
-  const { personId } = await invite(demo.db, by, { id: ulid(at.getTime()), name: person.name, roles: person.roles, ageBand: person.ageBand ?? 'adult' }, at)
+  const { id: personId } = await invite(demo.db, by, { id: ulid(at.getTime()), name: person.name, roles: person.roles, ageBand: person.ageBand ?? 'adult' }, at)
   await demo.db.update(people).set({ email: emailOf(person.key), emailKey: emailOf(person.key), passwordHash, hand: person.hand ?? 'right', textSize: person.textSize ?? 100, ground: person.ground ?? 'paper' }).where(eq(people.id, personId))
   demo.who.set(person.key, { studioId: demo.studioId, personId, roles: person.roles })
 }
