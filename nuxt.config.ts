@@ -40,8 +40,8 @@ export default defineNuxtConfig({
     proxyHops: 0,
     // Set in tests only: requests may carry the time it is to be.
     testClock: '',
-    // log2 of the scrypt cost. 17 is what is shipped; tests set less.
-    scryptLog2: 17,
+    // log2 of the scrypt cost. Empty is what is shipped (services/passwords); tests set less.
+    scryptLog2: '',
     session: { name: 'thirdhand', password: '', maxAge: 60 * 60 * 24 * 30, sessionHeader: false, cookie: { sameSite: 'lax', secure: true } },
   },
   routeRules: {

@@ -1,6 +1,6 @@
 import type { H3Event } from 'h3'
 import { countTry, forgetTries } from '#server/services/attempts'
-import { type Passwords, passwordsAt } from '#server/services/passwords'
+import { type Passwords, passwordsAt, SHIPPED_LOG2 } from '#server/services/passwords'
 import { passwordHashOf } from '#server/services/come-in'
 import { refuse } from '#server/services/refuse'
 import type { Who } from './guards'
@@ -8,7 +8,7 @@ import type { Who } from './guards'
 let passwords: Passwords | null = null
 
 export function usePasswords(): Passwords {
-  passwords ??= passwordsAt(Number(useRuntimeConfig().scryptLog2))
+  passwords ??= passwordsAt(Number(useRuntimeConfig().scryptLog2) || SHIPPED_LOG2)
   return passwords
 }
 
