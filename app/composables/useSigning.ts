@@ -5,8 +5,8 @@ import type { SignResult, ToSign } from '#shared/types/judging'
 export interface Signing {
   /** Signs each by itself. True when at least one was signed. */
   sign: (password: string, items: readonly ToSign[], words: Record<string, string>) => Promise<boolean>
-  /** What became of each, by its judgement. */
-  results: Ref<Record<string, { ok: boolean, says: string }>>
+  /** What became of each, by its judgement; what was signed is said on although it waits no longer. */
+  results: Ref<Record<string, { ok: boolean, label: string, says: string }>>
   says: Ref<string>
   isBusy: Ref<boolean>
 }
@@ -14,7 +14,7 @@ export interface Signing {
 /** Signs gathered judgements with one password. Each keeps its own id, so that a double press signs nothing twice. */
 export function useSigning(): Signing {
   const ids = new Map<string, string>()
-  const results = ref<Record<string, { ok: boolean, says: string }>>({})
+  const results = ref<Record<string, { ok: boolean, label: string, says: string }>>({})
   const says = ref('')
   const isBusy = ref(false)
   const idOf = (judgement: string): string => {

@@ -17,6 +17,7 @@ import { foldRow } from './ledger'
 import { currentNames, nameIn } from './names'
 import { visiblePiece } from './piece-view'
 import { refuse } from './refuse'
+import { unsigned } from './to-sign'
 
 /** Everything the judging page shows of a piece: lines with their evidence, photos, history, and what each level lacks. */
 export async function lookView(db: Db, who: Actor, pieceId: string, now: Date): Promise<LookView> {
@@ -35,7 +36,7 @@ export async function lookView(db: Db, who: Actor, pieceId: string, now: Date): 
     misses: missesOf(set, state), early: state.early.map(address => titleOf(set, address)), faultsSeen: [...new Set(state.faults.map(one => one.fault))], own: state.own,
     history: await historyOf(db, before.filter(one => one.piece.id !== row.id)),
     faults: faultsOf(set.lesson).map(({ key, sees, because, do: cure }) => ({ key, sees: plainIn(sees, set), because: plainIn(because, set), do: plainIn(cure, set) })),
-    turns: turnTitles(set, state), late: state.late.length, setAside: await countSetAside(db, who.studioId, row.id),
+    turns: turnTitles(set, state), late: state.late.length, setAside: await countSetAside(db, who.studioId, row.id), toSign: (await unsigned(db, who)).length,
   }
 }
 

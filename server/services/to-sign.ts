@@ -14,7 +14,7 @@ import { gateFacts, heldBy, pairOf, tiesOf, todayOf } from './judging-facts'
 import { currentNames, nameIn } from './names'
 
 /** Judgements by this person that give a level and are not signed: the newest of each person and lesson. */
-async function unsigned(db: DbOrTx, who: Actor) {
+export async function unsigned(db: DbOrTx, who: Actor) {
   const rows = await db.select({ judgement: judgements, piece: pieces, title: revisions.title }).from(judgements)
     .innerJoin(pieces, and(eq(pieces.studioId, judgements.studioId), eq(pieces.id, judgements.pieceId)))
     .innerJoin(revisions, and(eq(revisions.studioId, pieces.studioId), eq(revisions.id, pieces.revisionId)))

@@ -73,6 +73,8 @@ export interface LookView {
   /** Acts that came after the piece was finished, or that were set aside. */
   late: number
   setAside: number
+  /** Judged by this person and not signed, this piece left out. */
+  toSign: number
 }
 
 export interface ToSign {
