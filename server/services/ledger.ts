@@ -17,6 +17,8 @@ export interface Ledger {
   lesson: Lesson
   folded: Folded
   added: StoredEvent[]
+  /** Rows of what was added, not yet written: settle() writes them in one statement. */
+  rows: (typeof pieceEvents.$inferInsert)[]
 }
 
 export const FIRST_HEAD = '0'.repeat(64)
@@ -27,14 +29,14 @@ export async function openLedger(tx: Tx, studioId: string, pieceId: string): Pro
   const [row] = await tx.select().from(pieces).where(and(eq(pieces.studioId, studioId), eq(pieces.id, pieceId))).for('update')
   if (!row) return null
   const lesson = await compiledLesson(tx, studioId, row.revisionId)
-  return { studioId, row, lesson, folded: await foldRow(tx, row, lesson), added: [] }
+  return { studioId, row, lesson, folded: await foldRow(tx, row, lesson), added: [], rows: [] }
 }
 
 /** The ledger of a piece that begins with its first event. */
 export async function newLedger(tx: Tx, piece: NewPiece, lesson: Lesson): Promise<Ledger> {
   const row = { ...piece, n: 0, head: FIRST_HEAD, state: {}, machine: 0 }
   await tx.insert(pieces).values(row)
-  return { studioId: piece.studioId, row, lesson, folded: begin(piece.id), added: [] }
+  return { studioId: piece.studioId, row, lesson, folded: begin(piece.id), added: [], rows: [] }
 }
 
 /** The fold of a piece: the kept state when it is of this machine, else all its events again. */
@@ -50,13 +52,13 @@ export const isState = (value: unknown): value is State => typeof value === 'obj
 
 export interface Received { event: BenchEvent, receivedAt: Date, clockOffMs: number }
 
-/** Asks the machine and, where it says yes, stores the event with the next number and rolls the head. */
-export async function write(tx: Tx, ledger: Ledger, { event, receivedAt, clockOffMs }: Received, facts: Facts = {}): Promise<Verdict> {
+/** Asks the machine and, where it says yes, gives the event the next number and rolls the head. settle() stores it. */
+export function write(ledger: Ledger, { event, receivedAt, clockOffMs }: Received, facts: Facts = {}): Verdict {
   const verdict = add(ledger.lesson, ledger.folded, event, facts)
   if (!verdict.ok) return verdict
   const sha = shaOfEvent(event)
   const n = ledger.row.n + 1
-  await tx.insert(pieceEvents).values({
+  ledger.rows.push({
     studioId: ledger.studioId, pieceId: event.piece, n, id: event.id, tablet: event.tablet, seq: event.seq, round: event.round, actor: event.actor, kind: event.kind, v: event.v,
     at: new Date(event.at), since: event.since, receivedAt, clockOffMs, late: verdict.late, sha, body: canonical(event.body),
   })

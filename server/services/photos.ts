@@ -22,11 +22,23 @@ export async function keepPhoto(db: Db, files: Files, who: Actor, id: string, by
   if (photo.state === 'erased') refuse(409, 'This photo was taken away from the record.')
   if (sha256(bytes) !== photo.claimedSha) refuse(422, 'This is not the photo that was taken. It is kept on the tablet; send it again.')
   if (photo.state === 'held') return { state: 'held' }
+  const known = await sameBytes(db, who.studioId, photo.claimedSha)
+  if (known) {
+    await db.update(photos).set({ state: 'held', ...known }).where(and(eq(photos.studioId, who.studioId), eq(photos.id, id)))
+    return { state: 'held' }
+  }
   const kept = await keptImage(bytes)
   const fileSha = await files.put('photos', kept.bytes)
   await db.update(photos).set({ state: 'held', fileSha, bytes: kept.bytes.length, width: kept.width, height: kept.height })
     .where(and(eq(photos.studioId, who.studioId), eq(photos.id, id)))
   return { state: 'held' }
+}
+
+/** The same photograph under another name is one file; it need not be opened again. */
+async function sameBytes(db: Db, studioId: string, claimedSha: string) {
+  const [row] = await db.select({ fileSha: photos.fileSha, bytes: photos.bytes, width: photos.width, height: photos.height }).from(photos)
+    .where(and(eq(photos.studioId, studioId), eq(photos.claimedSha, claimedSha), eq(photos.state, 'held'))).limit(1)
+  return row ?? null
 }
 
 /** The kept bytes of a photo, for its maker and for who may see pieces of the studio. */

@@ -47,7 +47,7 @@ async function writeAct<K extends InstructorKind>(tx: Tx, ledger: Ledger, actor:
     body: BODIES[act.kind].parse(act.body),
     // The body was parsed by the schema of its kind, which the union cannot follow.
   } as unknown as BenchEvent
-  const verdict = await write(tx, ledger, { event, receivedAt: now, clockOffMs: 0 }, { instructor })
+  const verdict = write(ledger, { event, receivedAt: now, clockOffMs: 0 }, { instructor })
   if (!verdict.ok) refuse(422, verdict.says, { reason: verdict.reason })
 }
 

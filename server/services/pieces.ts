@@ -76,7 +76,7 @@ async function takeOne(taking: Taking, raw: unknown, known: Known): Promise<bool
   if (aside) return end(taking, 422, { id: head.id, reason: aside, says: 'This act was set aside before.' })
   if (head.seq !== known.next) return end(taking, 409, { id: head.id, reason: 'seq', says: 'Acts before this one have not arrived.', expected: known.next })
   if (!event) return await setAside(taking, raw, isNewer(head) ? 'newer' : 'unreadable', isNewer(head) ? 'This tablet runs a newer application than the studio.' : 'This act cannot be read.')
-  const verdict = event.kind === 'piece.started' && !taking.ledger ? await begin(taking, event) : await goOn(taking, event)
+  const verdict = event.kind === 'piece.started' && !taking.ledger ? await begin(taking, event) : goOn(taking, event)
   if (verdict) return await setAside(taking, raw, verdict.reason, verdict.says)
   known.next++
   const added = taking.ledger?.added.find(one => one.id === event.id)
@@ -86,9 +86,9 @@ async function takeOne(taking: Taking, raw: unknown, known: Known): Promise<bool
 
 const isNewer = (head: z.infer<typeof HeadSchema>): boolean => head.v > EVENT_VERSION || !(EVENT_KINDS as readonly string[]).includes(head.kind)
 
-async function goOn(taking: Taking, event: BenchEvent): Promise<{ reason: string, says: string } | null> {
+function goOn(taking: Taking, event: BenchEvent): { reason: string, says: string } | null {
   if (!taking.ledger) return { reason: 'unknown-piece', says: 'This piece is not known here yet.' }
-  const verdict = await write(taking.tx, taking.ledger, { event, receivedAt: taking.now, clockOffMs: taking.clockOffMs }, { instructor: taking.who.roles.includes('instructor') })
+  const verdict = write(taking.ledger, { event, receivedAt: taking.now, clockOffMs: taking.clockOffMs }, { instructor: taking.who.roles.includes('instructor') })
   return verdict.ok ? null : verdict
 }
 
@@ -103,7 +103,7 @@ async function begin(taking: Taking, event: EventOf<'piece.started'>): Promise<{
     place: found.turns[0]?.address ?? null, turnsDone: 0, turnsAll: found.turns.length, practice, material, goodsId: goods,
     startedAt: new Date(Math.min(new Date(event.at).getTime() + taking.clockOffMs, now.getTime())), finishedAt: null, finishedOn: null, waitingSince: null,
   }, found.lesson)
-  const refused = await goOn(taking, event)
+  const refused = goOn(taking, event)
   if (!refused && found.stoppedBy && found.stoppedBy !== who.personId) await stopForStudio(tx, taking.ledger, found.stoppedBy, now)
   return refused
 }

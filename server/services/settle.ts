@@ -4,13 +4,14 @@ import { dayIn } from '../../shared/bench/day'
 import type { StoredEvent } from '../../shared/bench/events'
 import { MACHINE, type State } from '../../shared/bench/state'
 import type { Tx } from '../db/client'
-import { looks, photos, pieces, readings } from '../db/schema/pieces'
+import { looks, photos, pieceEvents, pieces, readings } from '../db/schema/pieces'
 import { studios } from '../db/schema/studio'
 import type { Ledger } from './ledger'
 import { refreshStanding } from './standings'
 
 /** Writes what follows from the events added: the piece's row, readings, photos, looks, and the standing. */
 export async function settle(tx: Tx, ledger: Ledger, clockOffMs: number, now: Date): Promise<void> {
+  if (ledger.rows.length > 0) await tx.insert(pieceEvents).values(ledger.rows.splice(0))
   for (const event of ledger.added) {
     await projectReading(tx, ledger, event)
     await projectPhoto(tx, ledger, event)

@@ -150,8 +150,10 @@ class Hands {
     if (!reading) throw new Error(`No reading ${name}`)
     const limits = limitsOf(this.job.lesson, reading, scopeAt(this.set, turn), this.job.level, newestSamples(this.set, this.folded.state))
     const off = mustBeRight ? 0 : this.job.off?.[name] ?? 0
-    const values = Array.from({ length: reading.times }, () => valueNear(reading, limits, off, this.bench.random()))
-    return { values: values.map(value => decimal(value)), typed: values.map(value => String(value)), unit: reading.unit, gauge: reading.with ?? '' }
+    // One hand measures one thing twice and reads the same.
+    const value = valueNear(reading, limits, off, this.bench.random())
+    const values = Array.from({ length: reading.times }, () => value)
+    return { values: values.map(one => decimal(one)), typed: values.map(one => String(one)), unit: reading.unit, gauge: reading.with ?? '' }
   }
 
   private photo(why: 'step' | 'hold' | 'finished', turn: string | null, prompt: Inline[]): string {
@@ -220,7 +222,7 @@ function valueNear(reading: Reading, limits: ReturnType<typeof limitsOf>, off: n
   const middle = limits?.is ?? 10
   const half = limits ? (limits.high - limits.low) / 2 : 0
   const room = Math.min(half, limits?.agree ?? half)
-  const value = Math.round((middle + off + (draw - 0.5) * room * 0.9) / step) * step
+  const value = Math.round((middle + off + (draw - 0.5) * room * 0.6) / step) * step
   const held = off === 0 && limits ? Math.min(Math.floor(limits.high / step + 1e-6) * step, Math.max(Math.ceil(limits.low / step - 1e-6) * step, value)) : value
   return Number(Math.max(0, held).toFixed(6))
 }

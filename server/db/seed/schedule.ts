@@ -104,11 +104,19 @@ function late(now: Date, keeps: number): PlannedPiece[] {
   ]
 }
 
+/** An instructor who gives second names keeps their own hand in, too: Ruth at strands, Imran at links. */
+function staffPieces(now: Date): PlannedPiece[] {
+  const hand = (key: string, name: string): Apprentice => ({ key, name, pace: 0.5, levels: [5, 5, 4, 0, 4], roles: ['instructor'] })
+  const piece = (person: Apprentice, lesson: LessonSlug, daysAgo: number): PlannedPiece =>
+    ({ person, lesson, level: null, second: false, seen: 'holds', outcome: 'kept', judge: 'dilys', at: new Date(now.getTime() - daysAgo * DAY) })
+  return [260, 140, 30].flatMap(days => [piece(hand('ruth', 'Ruth Calder'), 'hand-knotted-strand', days), piece(hand('imran', 'Imran Sethi'), 'wrapped-loop-link', days + 3)])
+}
+
 /** Everything, in the order it happened. `keeps` is the life of a link's sign-off in days. */
 export function demoPieces(now: Date, keeps: number): PlannedPiece[] {
   const others = CLASSES.flatMap(of => of.people.filter(person => person.key !== 'farid' && person.key !== 'grace').flatMap(person => [...usualPieces(now, of, person), ...againPieces(now, of, person)]))
   // Ben's links wait for their second name: they were signed only last week.
   const [a] = CLASSES
   const pieces = others.map(piece => piece.person.key === 'ben' && piece.lesson === 'wrapped-loop-link' && piece.level === 4 ? { ...piece, at: evening(now, a, 1, 30), second: false } : piece)
-  return [...pieces, ...late(now, keeps), ...threads(now)].sort((x, y) => x.at.getTime() - y.at.getTime())
+  return [...pieces, ...late(now, keeps), ...staffPieces(now), ...threads(now)].sort((x, y) => x.at.getTime() - y.at.getTime())
 }

@@ -89,7 +89,9 @@ async function bringLessons(demo: Demo, folder: string, at: Date): Promise<void>
   for (const { key, lessons } of FOUNDED) {
     for (const [slug, level] of Object.entries(lessons)) {
       const taught = [...demo.taught].find(([one]) => one === slug)?.[1]
-      if (taught) await founding(demo.db, actor(demo, 'owen'), { id: ulid(at.getTime()), person: actor(demo, key).personId, lesson: taught.lessonId, level }, at)
+      if (!taught) continue
+      demo.levels.set(`${key} ${slug}`, level)
+      await founding(demo.db, actor(demo, 'owen'), { id: ulid(at.getTime()), person: actor(demo, key).personId, lesson: taught.lessonId, level }, at)
     }
   }
 }
