@@ -6,7 +6,7 @@ import type { InviteBodySchema } from '../../shared/schemas/people'
 import type { Db, Tx } from '../db/client'
 import { people, personNames, tokens } from '../db/schema/people'
 import { classes, memberships } from '../db/schema/studio'
-import { inTransaction } from '../db/transaction'
+import { inTransaction, isDuplicate } from '../db/transaction'
 import type { Actor } from './actor'
 import { emailKey } from './come-in'
 import { queueMail } from './mail'
@@ -50,14 +50,16 @@ async function offer(tx: Tx, who: Actor, body: Invite, email: string, now: Date)
 }
 
 async function takeIn(tx: Tx, who: Actor, body: Invite, now: Date): Promise<void> {
-  const [known] = await tx.select({ id: people.id }).from(people).where(eq(people.id, body.id))
-  if (known) {
-    // The same press again, or another studio's person: that one is not there.
+  try {
+    await tx.insert(people).values({ id: body.id, wants: {} })
+  }
+  catch (error) {
+    if (!isDuplicate(error)) throw error
+    // The same press again; or the id of another studio's person, who is not there.
     const [member] = await tx.select({ id: memberships.id }).from(memberships).where(and(eq(memberships.studioId, who.studioId), eq(memberships.personId, body.id)))
     found(member)
     return
   }
-  await tx.insert(people).values({ id: body.id, wants: {} })
   await tx.insert(personNames).values({ personId: body.id, version: 1, name: body.name, fromAt: now })
   await giveParts(tx, who, body.id, { ...body, classId: body.classId ?? null }, now)
 }

@@ -5,6 +5,7 @@ import { sha256 } from '../../shared/lesson/canonical'
 import type { TOKEN_KINDS } from '../../shared/schemas/lists'
 import type { DbOrTx, Tx } from '../db/client'
 import { type Offer, tokens } from '../db/schema/people'
+import { isDuplicate } from '../db/transaction'
 
 type TokenKind = (typeof TOKEN_KINDS)[number]
 export interface TokenFor { kind: TokenKind, personId: string | null, emailKey: string | null, studioId: string | null, ends: Date }
@@ -17,10 +18,14 @@ const secretOf = (): string => randomBytes(32).toString('base64url')
 
 /** A token for a mailed link. Its secret is made when the letter is written, so that no table ever holds one. False for a repeat of the same id. */
 export async function openToken(tx: Tx, id: string, about: TokenFor & { offer?: Offer }): Promise<boolean> {
-  const [there] = await tx.select({ id: tokens.id }).from(tokens).where(eq(tokens.id, id))
-  if (there) return false
-  await tx.insert(tokens).values({ id, hash: sha256(secretOf()), ...about })
-  return true
+  try {
+    await tx.insert(tokens).values({ id, hash: sha256(secretOf()), ...about })
+    return true
+  }
+  catch (error) {
+    if (isDuplicate(error)) return false
+    throw error
+  }
 }
 
 /** A secret of 256 bits for this link, in place of any earlier one, or null where the link is used up or too old. Only its hash is kept. */

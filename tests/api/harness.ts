@@ -7,7 +7,8 @@ import { attempts, people, personNames } from '#server/db/schema/people'
 import { memberships } from '#server/db/schema/studio'
 import { passwordsAt } from '#server/services/passwords'
 import type { Role } from '#shared/schemas/lists'
-import { makeWorld, NAMES, type World } from './judging-world'
+import type { NAMES, World} from './judging-world';
+import { makeWorld } from './judging-world'
 
 export const PASSWORD = 'third hand bench'
 /** As the tests' server is told; what is shipped is asserted elsewhere. */
