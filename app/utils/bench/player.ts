@@ -1,0 +1,30 @@
+/** What the player's screen shows beside the piece itself; pure, and tested without a screen. */
+import { needsOf, type Need } from '#shared/bench/screen'
+import { placeIndex, type SetOut, type State, type Turn } from '#shared/bench/machine'
+import type { Inline } from '#shared/lesson/schema'
+
+export interface Wait { until: string, why: readonly Inline[] | null }
+
+/** Is what a step asked for there now? */
+export function isMet(set: SetOut, state: State, turn: Turn, need: Need, now: number): boolean {
+  return !needsOf(set, state, turn, now).some(one => one.kind === need.kind && one.at === need.at)
+}
+
+/** Where Back leads from here: a turn to look at, or null where there is none. */
+export function backFrom(set: SetOut, state: State, viewing: number | null): number | null {
+  const at = (viewing ?? placeIndex(set, state)) - 1
+  return at >= 0 && set.turns.length > 0 ? at : null
+}
+
+/** Where Next leads while looking back: a turn to look at, or null at the place. */
+export function onFrom(set: SetOut, state: State, viewing: number): number | null {
+  return viewing + 1 >= placeIndex(set, state) ? null : viewing + 1
+}
+
+const NEED_SAYS: Record<Need['kind'], string> = { reading: 'then: measure it', photo: 'then: a photo', check: 'then: a question', wait: 'then: it rests' }
+export const needSays = (need: Need): string => NEED_SAYS[need.kind]
+
+/** Bytes of a blob and their hash, as an event tells of them. */
+export async function bytesOf(blob: Blob): Promise<Uint8Array> {
+  return new Uint8Array(await blob.arrayBuffer())
+}
