@@ -12,6 +12,8 @@ export function useBenchPerson() {
   const person = useState<BenchPerson | null>('bench-person', () => null)
   const kept = useLocalStorage<BenchPerson | null>('thirdhand-bench-person', null, { serializer: jsonOf(PersonSchema.nullable().catch(null)) })
   const outbox = useOutboxStore()
+  const ground = useState<string>('ground', () => 'paper')
+  useHead({ htmlAttrs: { style: () => `font-size: ${(person.value?.textSize ?? 100) * 0.16}px` } })
 
   /** `who`: they must say who they are. */
   async function ready(): Promise<'ready' | 'who' | 'away'> {
@@ -23,10 +25,19 @@ export function useBenchPerson() {
       if (me.success) kept.value = me.data.person
     }
     if (!person.value) return 'away'
+    ground.value = person.value.ground
     await outbox.start(person.value.id)
     return 'ready'
   }
-  return { person, ready }
+  /** The person has finished here: this tablet forgets who it was, and keeps the pieces for when they come back. */
+  async function leave(): Promise<void> {
+    await $fetch('/api/finished', { method: 'POST' }).catch(() => undefined)
+    kept.value = null
+    person.value = null
+    clearNuxtData('me')
+    await navigateTo('/come-in')
+  }
+  return { person, ready, leave }
 }
 
 /** What is chosen for this tablet: units, and the name of the bench it stands at. */

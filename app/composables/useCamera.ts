@@ -1,3 +1,4 @@
+import { promiseTimeout } from '@vueuse/core'
 import { type Made, photoFrom } from '~/utils/bench/photo'
 
 export interface Camera {

@@ -58,9 +58,9 @@ async function setAside(db: BenchDb, batch: readonly KeptEvent[], reason: string
 
 async function take(db: BenchDb, { taken, already, refused }: TakenIn, batch: readonly KeptEvent[]): Promise<void> {
   const tx = db.transaction('events', 'readwrite')
-  for (const { id, n, ...more } of [...taken, ...already]) {
+  for (const { id, n, late } of [...taken, ...already.map(one => ({ ...one, late: null }))]) {
     const known = await tx.store.get(id)
-    if (known) await tx.store.put({ ...known, n, late: 'late' in more ? more.late : known.late })
+    if (known) await tx.store.put({ ...known, n, late: late ?? known.late })
   }
   if (refused) {
     const { expected } = refused
