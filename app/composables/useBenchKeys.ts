@@ -2,7 +2,7 @@ import { keptDown, KEY_WAYS, type KeyAct, letGo, NO_KEYS, press, release, walk }
 
 /** One thing that can be lit and said. */
 export interface BenchStop { key: string, /** What saying it says, in words. */ says: string, act: () => void }
-interface Walked { id: () => string, stops: () => readonly BenchStop[], unlit: () => void }
+interface Walked { id: () => string, stops: () => readonly BenchStop[], unlit: () => void, unlitSays: () => string | null }
 export interface BenchKeys {
   /** The stop that is lit. */
   lit: Ref<string | null>
@@ -13,6 +13,8 @@ export interface BenchKeys {
   say: () => void
   walks: ComputedRef<boolean>
   litStop: ComputedRef<BenchStop | null>
+  /** What saying says while nothing is lit, or null where it says nothing. */
+  unlitSays: ComputedRef<string | null>
   stack: Ref<Walked[]>
 }
 export interface OnKeys { next: () => void, back: () => void, help: () => void }
@@ -65,7 +67,7 @@ export function provideBenchKeys(on: OnKeys, screen: MaybeRefOrGetter<string>): 
   useRafFn(() => { kept.value = state.down ? keptDown(state, performance.now(), now.value) : null })
   watch(() => now.value.id, () => { lit.value = null })
 
-  const keys: BenchKeys = { lit, kept, light, say, litStop, walks: computed(() => now.value.walks), stack }
+  const keys: BenchKeys = { lit, kept, light, say, litStop, unlitSays: computed(() => top.value?.unlitSays() ?? null), walks: computed(() => now.value.walks), stack }
   provide(KEYS, keys)
   return keys
 }
@@ -78,9 +80,9 @@ export function useBenchKeys(): BenchKeys {
 }
 
 /** Makes the page walk between these stops while the component is there. `unlit` is what saying does while nothing is lit. */
-export function useBenchStops(id: MaybeRefOrGetter<string>, stops: MaybeRefOrGetter<readonly BenchStop[]>, unlit: () => void = () => undefined): BenchKeys {
+export function useBenchStops(id: MaybeRefOrGetter<string>, stops: MaybeRefOrGetter<readonly BenchStop[]>, unlit: () => void = () => undefined, unlitSays: () => string | null = () => null): BenchKeys {
   const keys = useBenchKeys()
-  const own: Walked = { id: () => toValue(id), stops: () => toValue(stops), unlit }
+  const own: Walked = { id: () => toValue(id), stops: () => toValue(stops), unlit, unlitSays }
   keys.stack.value = [...keys.stack.value, own]
   onScopeDispose(() => { keys.stack.value = keys.stack.value.filter(one => one !== own) })
   return keys

@@ -29,10 +29,11 @@ export function drawStrip({ length, marks }: StripFigures, says: StripSays): Dra
     { t: 'dimension', from: [at(0), 56], to: [at(length), 56], at: [WIDTH / 2, 42], anchor: 'middle', says: says.length, main: true },
   ]
   const inOrder = marks.map((mm, i) => ({ mm, says: says.marks[i] ?? '' })).sort((a, b) => a.mm - b.mm)
+  // Ticks first: a figure stands over the ticks of the rows below.
+  inOrder.forEach(({ mm }, i) => shapes.push({ t: 'line', role: 'tick', d: places('M', at(mm), y - 16, 'V', y + 54 + i * 44), width: 2 }))
   inOrder.forEach(({ mm, says: figure }, i) => {
     const row = y + 44 + i * 44
     const isRoomy = at(mm) < WIDTH - 170
-    shapes.push({ t: 'line', role: 'tick', d: places('M', at(mm), y - 16, 'V', row + 10), width: 2 })
     shapes.push({ t: 'dimension', from: [at(0), row], to: [at(mm), row], at: isRoomy ? [at(mm) + 14, row + 10] : [at(mm) - 14, row - 8], anchor: isRoomy ? 'start' : 'end', says: figure, main: false })
   })
   return { width: WIDTH, height: y + 44 + Math.max(1, inOrder.length) * 44, shapes }

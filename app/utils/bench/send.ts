@@ -97,10 +97,11 @@ const isEvents = (data: unknown): data is { events: StoredEvent[], n: number } =
 export async function pull(db: BenchDb, to: ToStudio, pieceId: string): Promise<Outcome> {
   const piece = await db.get('pieces', pieceId)
   if (!piece) return 'sent'
+  // Not known there yet: its first act has not been sent.
+  if (piece.pulled === 0 && !(await db.getAllFromIndex('events', 'piece', pieceId)).some(one => one.n !== null)) return 'sent'
   const answer = await to.get(`/api/pieces/${pieceId}/events?after=${piece.pulled}`).catch(() => null)
   if (!answer || answer.status >= 500 || answer.status === 429) return 'away'
   if (answer.status === 401) return 'who'
-  // Not known there yet: its first act has not been sent.
   if (!isEvents(answer.data)) return 'sent'
   await takeIn(db, pieceId, answer.data.events)
   return 'sent'
