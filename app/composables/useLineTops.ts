@@ -21,7 +21,7 @@ export function useLineTops(mirror: Readonly<Ref<HTMLElement | null>>, lines: Re
   onMounted(() => {
     measure()
     // The letters' own widths come with their font.
-    void document.fonts.ready.then(measure)
+    void document.fonts?.ready.then(measure)
   })
   return { topOf: line => tops.value[Math.min(line, tops.value.length) - 1] ?? 0, height }
 }

@@ -12,6 +12,13 @@ export interface TextPane {
   onKey: (event: KeyboardEvent) => void
 }
 
+/** Types as a person would: the one way to change a textarea that keeps its undo. False where an engine has it no more. */
+function typeIn(text: string, isNothingChosen: boolean): boolean {
+  if (typeof document.execCommand !== 'function') return false
+  if (text === '') return isNothingChosen || document.execCommand('delete')
+  return document.execCommand('insertText', false, text)
+}
+
 /** A textarea that can be edited by keys and by mends, and says where its caret is. */
 export function useTextPane(area: Readonly<Ref<HTMLTextAreaElement | null>>, source: Ref<string>): TextPane {
   const caret = ref(0)
@@ -33,9 +40,7 @@ export function useTextPane(area: Readonly<Ref<HTMLTextAreaElement | null>>, sou
     if (!box) return
     box.focus({ preventScroll: true })
     box.setSelectionRange(from, to)
-    // The one way to change a textarea that keeps its undo; where it is not there, the text changes all the same.
-    const isDone = text === '' ? from === to || document.execCommand('delete') : document.execCommand('insertText', false, text)
-    if (!isDone) {
+    if (!typeIn(text, from === to)) {
       box.setRangeText(text, from, to)
       box.dispatchEvent(new Event('input', { bubbles: true }))
     }
