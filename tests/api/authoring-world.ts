@@ -13,6 +13,7 @@ import { readDraft, saveDraft } from '#server/services/drafts'
 import { type Files, openFiles } from '#server/services/files'
 import { putIntoUse } from '#server/services/into-use'
 import { makeLesson } from '#server/services/lessons'
+import { told } from './harness'
 
 export const NOON = new Date('2026-03-17T12:00:00.000Z')
 export const later = (minutes: number): Date => new Date(NOON.getTime() + minutes * 60_000)
@@ -21,7 +22,7 @@ export interface Desk { db: Db, files: Files, folder: string, close: () => Promi
 
 /** The database the tests run on, and an empty folder for pictures. */
 export async function openDesk(): Promise<Desk> {
-  const { db, pool } = openDatabase(process.env.NUXT_DATABASE_URL ?? '', 12)
+  const { db, pool } = openDatabase(told('TEST_DATABASE_URL'), 12)
   const folder = await mkdtemp(join(tmpdir(), 'pictures-'))
   return { db, files: openFiles(folder), folder, close: async () => { await pool.end(); await rm(folder, { recursive: true, force: true }) } }
 }
