@@ -2,7 +2,7 @@
 import { ulid } from 'ulid'
 import type { Outcome, Seen } from '../../../shared/schemas/lists'
 import { againOf, linesOf } from '../../../shared/judging/marks'
-import { canMark } from '../../../shared/judging/given'
+import { canMark, type Given } from '../../../shared/judging/given'
 import type { SignedLevel } from '../../../shared/judging/levels'
 import type { Db } from '../client'
 import { inTransaction } from '../transaction'
@@ -24,9 +24,9 @@ export async function judge(db: Db, who: Actor, pieceId: string, said: Said, at:
   const lines = linesOf(set, ledger.folded.state)
   const again = againOf(lines, ledger.row.head)
   const bad = said.outcome === 'sent-back' ? lines.find(line => line.by === 'judge' && line.essential)?.key : undefined
-  const marks = Object.fromEntries(lines.flatMap((line) => {
+  const marks = Object.fromEntries(lines.flatMap((line): [string, Given][] => {
     if (!canMark(line, said.seen)) return []
-    if (line.by === 'judge') return [[line.key, { says: line.key === bad ? 'no' as const : 'yes' as const }]]
+    if (line.by === 'judge') return [[line.key, { says: line.key === bad ? 'no' : 'yes' }]]
     return line.key === again && line.takes[0] ? [[line.key, { value: String(Number((line.takes[0].values[0] ?? 0).toFixed(2))) }]] : []
   }))
   const id = ulid(at.getTime())
