@@ -81,6 +81,19 @@ export const useBenchStore = defineStore('bench', () => {
     finally { isBusy = false }
   }
 
-  watch(() => outbox.changes, () => void refresh())
+  /** Asks the studio for the label of a piece that it has numbered meanwhile. */
+  async function hearLabel(): Promise<void> {
+    const kept = piece.value
+    if (!kept || kept.label !== '' || !events.value.some(event => event.n !== undefined)) return
+    const answer = await $fetch<PieceTakenUp>(`/api/pieces/${kept.id}`).catch(() => null)
+    if (!answer || piece.value?.id !== kept.id) return
+    const db = await benchDb()
+    const now = await db.get('pieces', kept.id)
+    if (!now) return
+    piece.value = { ...now, label: answer.piece.label }
+    await db.put('pieces', piece.value)
+  }
+
+  watch(() => outbox.changes, async () => { await refresh(); await hearLabel() })
   return { piece, events, folded, says, open, refresh, begin, act }
 })

@@ -50,7 +50,8 @@ export function drawLoop({ inside, wire, neck, bead }: LoopFigures, says: LoopSa
   const thick = wire * scale
   const jaw = inside * scale
   const round = (jaw + thick) / 2
-  const middle = WIDTH / 2 + (left ? -40 : 40)
+  // The neck's figure stands beside the loop: it gets the room.
+  const middle = WIDTH / 2 + (left ? 40 : -40)
   const beadTop = 340
   const beadRadius = bead / 2 * scale
   const centre = beadTop - neck * scale - thick / 2 - round

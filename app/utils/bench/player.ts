@@ -1,7 +1,7 @@
 /** What the player's screen shows beside the piece itself; pure, and tested without a screen. */
 import { needsOf, type Need } from '#shared/bench/screen'
-import { placeIndex, type SetOut, type State, type Turn } from '#shared/bench/machine'
-import type { Inline } from '#shared/lesson/schema'
+import { placeIndex, type SetOut, type State, stepOf, type Turn } from '#shared/bench/machine'
+import type { Inline, Step } from '#shared/lesson/schema'
 
 export interface Wait { until: string, why: readonly Inline[] | null }
 
@@ -19,6 +19,19 @@ export function backFrom(set: SetOut, state: State, viewing: number | null): num
 /** Where Next leads while looking back: a turn to look at, or null at the place. */
 export function onFrom(set: SetOut, state: State, viewing: number): number | null {
   return viewing + 1 >= placeIndex(set, state) ? null : viewing + 1
+}
+
+/** How far back the work is looked for that a hold asks about. */
+const LOOKED_BACK = 4
+
+/** The last step before a turn that shows the work: its drawing or its picture. */
+export function lastShown(set: SetOut, at: number): { turn: Turn, step: Step } | null {
+  for (let i = at - 1; i >= Math.max(0, at - LOOKED_BACK); i--) {
+    const turn = set.turns[i]
+    const step = turn ? stepOf(set, turn) : null
+    if (turn && step && (turn.drawings.length > 0 || step.pictures.length > 0)) return { turn, step }
+  }
+  return null
 }
 
 const NEED_SAYS: Record<Need['kind'], string> = { reading: 'then: measure it', photo: 'then: a photo', check: 'then: a question', wait: 'then: it rests' }
