@@ -1,7 +1,15 @@
 import withNuxt from './.nuxt/eslint.config.mjs'
 
 /** Imports run one way: app -> shared <- server; within shared: trade <- lesson <- bench <- judging. */
-const never = (...groups) => ({ 'no-restricted-imports': ['error', { patterns: groups.map(([group, message]) => ({ group, message })) }] })
+// A pattern that begins with # would be read as a comment, so the aliases are told as regular expressions.
+const never = (...groups) => ({
+  'no-restricted-imports': ['error', {
+    patterns: groups.flatMap(([group, message]) => [
+      { group: group.filter(one => !one.startsWith('#')), message },
+      ...group.filter(one => one.startsWith('#')).map(one => ({ regex: `^${one.replace('*', '.*')}`, message })),
+    ]),
+  }],
+})
 const FRAMEWORK = [['vue', 'vue-router', 'pinia', '@vueuse/*', 'nuxt', 'nuxt/*', '#app', '#app/*', '#imports', 'h3', 'nitropack', 'drizzle-orm', 'drizzle-orm/*', 'mysql2', 'mysql2/*', 'node:*'], 'shared/ is plain TypeScript: no framework, no database, no Node.']
 const OUT = [['#server/*', '~/*', '@/*', '**/server/**', '**/app/**'], 'shared/ imports neither app nor server.']
 const up = (...areas) => [areas.flatMap(area => [`**/${area}/*`, `#shared/${area}/*`]), 'Within shared imports run one way: trade <- lesson <- bench <- judging.']
