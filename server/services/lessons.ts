@@ -1,14 +1,15 @@
 import { and, asc, desc, eq, sql } from 'drizzle-orm'
 import { ulid } from 'ulid'
-import { LessonSchema } from '../../shared/lesson/schema'
 import { skeletonOf } from '../../shared/lesson/skeleton'
 import { freeSlug, titleOf } from '../../shared/lesson/titles'
+import { signDrawing } from '../../shared/lesson/usual'
 import type { NewLessonBody } from '../../shared/schemas/lessons'
 import type { LessonRow, LessonStage } from '../../shared/types/lessons'
 import type { Db, DbOrTx, Tx } from '../db/client'
 import { inTransaction, isDuplicate } from '../db/transaction'
 import { drafts, lessons, revisions } from '../db/schema/lessons'
 import type { Actor } from './actor'
+import { compiledLesson } from './compiled'
 import { namesOf } from './names'
 import { found, refuse } from './refuse'
 
@@ -46,29 +47,22 @@ export async function listLessons(db: Db, studioId: string): Promise<LessonRow[]
     .leftJoin(drafts, and(eq(drafts.studioId, lessons.studioId), eq(drafts.lessonId, lessons.id)))
     .leftJoin(revisions, and(eq(revisions.studioId, lessons.studioId), eq(revisions.id, inForce)))
     .where(eq(lessons.studioId, studioId))
-  const made = await db.select({
-    id: revisions.id, lessonId: revisions.lessonId, number: revisions.number, title: revisions.title, at: revisions.at, by: revisions.by,
-    facts: sql<string>`JSON_OBJECT('needs', JSON_QUERY(${revisions.compiled}, '$.needs'), 'time', JSON_QUERY(${revisions.compiled}, '$.time'))`,
-  }).from(revisions).where(eq(revisions.studioId, studioId)).orderBy(desc(revisions.number))
+  const made = await db.select({ id: revisions.id, lessonId: revisions.lessonId, number: revisions.number, title: revisions.title, at: revisions.at, by: revisions.by })
+    .from(revisions).where(eq(revisions.studioId, studioId)).orderBy(desc(revisions.number))
   const names = await namesOf(db, [...made.map(row => row.by), ...rows.map(row => row.savedBy ?? row.lesson.owner)])
-  return rows.map(({ lesson, head, savedAt, savedBy, ahead }) => {
+  const list: LessonRow[] = []
+  for (const { lesson, head, savedAt, savedBy, ahead } of rows) {
     const mine = made.filter(row => row.lessonId === lesson.id)
     const revision = mine.find(row => row.id === lesson.currentRevision) ?? mine[0]
-    const by = revision?.by ?? savedBy ?? lesson.owner
-    const facts = revision ? factsOf(revision.facts) : { needs: [], time: null }
-    return {
-      id: lesson.id, slug: lesson.slug, craft: lesson.craft, title: revision?.title ?? titleOf(head ?? '') ?? lesson.slug, ...facts,
+    const compiled = revision ? await compiledLesson(db, studioId, revision.id) : null
+    list.push({
+      id: lesson.id, slug: lesson.slug, craft: lesson.craft, title: revision?.title ?? titleOf(head ?? '') ?? lesson.slug,
+      needs: compiled?.needs ?? [], time: compiled?.time ?? null, drawing: compiled ? signDrawing(compiled) : null,
       stage: stageOf(lesson, mine.length), revision: revision ? { number: revision.number, at: revision.at.toISOString() } : null,
-      author: names.get(by) ?? '', draft: savedAt && (!revision || ahead !== 0) ? { savedAt: savedAt.toISOString() } : null,
-    }
-  }).sort((a, b) => a.title.localeCompare(b.title, 'en'))
-}
-
-const FactsSchema = LessonSchema.pick({ needs: true, time: true })
-/** `needs` and `time` of a compiled lesson; a column of JSON text comes back parsed or not, as the driver's version has it. */
-function factsOf(facts: unknown): Pick<LessonRow, 'needs' | 'time'> {
-  const value: unknown = typeof facts === 'string' ? JSON.parse(facts) : facts
-  return FactsSchema.parse(value)
+      author: names.get(revision?.by ?? savedBy ?? lesson.owner) ?? '', draft: savedAt && (!revision || ahead !== 0) ? { savedAt: savedAt.toISOString() } : null,
+    })
+  }
+  return list.sort((a, b) => a.title.localeCompare(b.title, 'en'))
 }
 
 /** Makes a lesson with a text to begin from. The same id again is the same lesson. */

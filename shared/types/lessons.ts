@@ -1,5 +1,6 @@
 /** What the pages about lessons are given. Times are ISO texts. */
 import type { Craft, Finding, Lesson } from '../lesson/schema'
+import type { Drawn } from '../trade/drawing'
 import type { Effect, REVISION_ACTS } from '../schemas/lists'
 
 export const LESSON_STAGES = ['in-use', 'draft', 'withdrawn', 'put-away'] as const
@@ -18,6 +19,8 @@ export interface LessonRow {
   /** The one in use, else the last. */
   revision: { number: number, at: string } | null
   author: string
+  /** Drawn from its own figures at its usual sizes. */
+  drawing: Drawn | null
   /** A text that is ahead of what is in use. */
   draft: { savedAt: string } | null
 }
