@@ -31,9 +31,8 @@ readings:                     # what is measured and typed
 criteria:                     # what a judge looks at, in order; a key is for ever
   - { key: length, measure: long, say: Length as told }
 closing: [Offcuts in the scrap tray, Tools back]
+# Below the dashes: what the piece is, in a sentence or two; then the steps, each under ##.
 ---
-
-Say here what the piece is, in a sentence or two.
 
 ## Cut to length
 

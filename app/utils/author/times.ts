@@ -11,3 +11,10 @@ export const longDay = (iso: string): string => new Date(iso).toLocaleDateString
 /** How many of a thing, in words where the number is small. */
 const SMALL = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine', 'ten', 'eleven', 'twelve']
 export const countWords = (n: number, one: string, many: string): string => `${SMALL[n] ?? n} ${n === 1 ? one : many}`
+
+/** Minutes of work as they are said: 25 min, 1½ h, 4 h. */
+export function workTime(minutes: number): string {
+  const hours = minutes / 60
+  if (hours < 1.5 || !Number.isInteger(hours * 2)) return `${minutes} min`
+  return `${Math.floor(hours)}${Number.isInteger(hours) ? '' : '½'} h`
+}
