@@ -1,4 +1,5 @@
 import { and, asc, desc, eq, gte, inArray, isNotNull, isNull, lte, or } from 'drizzle-orm'
+import type { State } from '../../shared/bench/state'
 import { lapse } from '../../shared/judging/lapse'
 import { NOTHING_HELD } from '../../shared/judging/signer'
 import type { Lesson } from '../../shared/lesson/schema'
@@ -50,10 +51,16 @@ async function piecesInHand(db: DbOrTx, who: Actor, rows: readonly OwnPiece[], n
     const step = isState(row.state) ? inHand(await compiledLesson(db, who.studioId, row.revisionId), row.state).step : null
     shown.push({
       id: row.id, label: row.label, lesson: row.title, step, turnsDone: row.turnsDone, turnsAll: row.turnsAll, photo: newest.get(row.id) ?? null,
-      restsUntil: restsUntil(row.state, now), at: row.startedAt.toISOString(),
+      restsUntil: isState(row.state) ? restsStill(row.state, now) : null, at: row.startedAt.toISOString(),
     })
   }
   return shown
+}
+
+/** When the wait in hand is over; one that was gone on from rests no more. */
+function restsStill(state: State, now: Date): string | null {
+  const waits = Object.fromEntries(Object.entries(state.waits).filter(([key]) => state.done[key.split('#')[0] ?? ''] === undefined))
+  return restsUntil({ ...state, waits }, now)
 }
 
 async function unseenNotes(db: DbOrTx, who: Actor): Promise<HomeNote[]> {
