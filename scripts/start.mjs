@@ -35,7 +35,11 @@ async function main() {
   stops.push(() => database.stop())
   await step('scripts/migrate.ts', [], { OWNER_DATABASE_URL: database.owner })
   const mail = await mailOf(place, folders)
-  if (place.isLocal) await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files })
+  if (place.isLocal) {
+    await database.patience(false)
+    await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files })
+    await database.patience(true)
+  }
   await build('.output', '.nuxt')
   const server = await startServer('.output', {
     NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: process.env.NUXT_SESSION_PASSWORD ?? secrets.session, NUXT_SMTP_URL: mail.smtpUrl, NUXT_CATCHER_URL: mail.url, NUXT_PUBLIC_URL: place.url, NUXT_FILES_DIR: folders.files,
