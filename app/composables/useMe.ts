@@ -1,14 +1,5 @@
 import type { Act } from '#shared/judging/roles'
-import type { Ground, Hand, Role } from '#shared/schemas/lists'
-
-export interface StudioOfMine { id: string, slug: string, name: string, zone: string, roles: Role[] }
-export interface Me {
-  person: { id: string, name: string, hand: Hand, textSize: number, ground: Ground }
-  studios: StudioOfMine[]
-  studio: Omit<StudioOfMine, 'roles'> | null
-  roles: Role[]
-  may: Act[]
-}
+import type { Me } from '#shared/types/entry'
 
 /** Who is here, in which studio, and what they may; null when nobody is. One answer for the whole page. */
 export async function useMe() {
