@@ -100,7 +100,7 @@ async function withStudio(work) {
   stops.push(() => catcher.stop())
   const url = `http://localhost:${port}`
   const server = await startServer(OUTPUT, {
-    NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: secrets.session, NUXT_SMTP_URL: catcher.smtpUrl, NUXT_CATCHER_URL: catcher.url, NUXT_PUBLIC_URL: url, NUXT_FILES_DIR: files, NUXT_SCRYPT_LOG2: '12',
+    NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: secrets.session, NUXT_SMTP_URL: catcher.smtpUrl, NUXT_CATCHER_URL: catcher.url, NUXT_PUBLIC_URL: url, NUXT_FILES_DIR: files, NUXT_SCRYPT_LOG2: '12', NUXT_TEST_CLOCK: '1',
     NITRO_PORT: String(port), NITRO_HOST: '127.0.0.1', PORT: String(port), HOST: '127.0.0.1', NUXT_SESSION_COOKIE_SECURE: 'false',
   }, `http://127.0.0.1:${port}/api/ready`)
   stops.push(() => server.stop())

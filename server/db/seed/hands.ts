@@ -3,11 +3,11 @@ import { ulid } from 'ulid'
 import type { z } from 'zod'
 import { limitsOf } from '../../../shared/bench/answers'
 import { type Answer, type BenchEvent, type Bodies, decimal, EVENT_VERSION, type EventKind, type MeasuredSchema, type PieceStarted } from '../../../shared/bench/events'
-import { add, askOf, begin, type Folded, holdPassed, newestSamples, plan, planSha, scopeAt, type Turn } from '../../../shared/bench/machine'
+import { add, askOf, begin, type Folded, holdPassed, newestSamples, scopeAt, type Turn } from '../../../shared/bench/machine'
 import { stepOf } from '../../../shared/bench/set-out'
-import { KIND_OF_UNIT, textOf, valueOf } from '../../../shared/bench/scope'
-import { countOf, workOut } from '../../../shared/lesson/figures'
-import { FIGURE_ENGINE, type Inline, type Lesson, type Reading } from '../../../shared/lesson/schema'
+import { beginWith, toldOf } from '../../../shared/bench/sizes'
+import { countOf } from '../../../shared/lesson/figures'
+import type { Inline, Lesson, Reading } from '../../../shared/lesson/schema'
 import type { Db } from '../client'
 import { inTransaction } from '../transaction'
 import type { Actor } from '../../services/actor'
@@ -196,24 +196,11 @@ class Hands {
 
 /** What a piece begins with: the usual sizes, or those told. */
 export function startOf(job: Pick<Job, 'lesson' | 'revision' | 'level' | 'left' | 'practice' | 'sizes'>): PieceStarted {
-  const { lesson } = job
-  const values = Object.fromEntries(lesson.sizes.map(size => [size.name, job.sizes?.[size.name] ?? size.usual]))
-  const sizes = Object.fromEntries(lesson.sizes.map((size) => {
-    const value = values[size.name]
-    const text = typeof value === 'number' ? decimal(value) : typeof value === 'boolean' ? (value ? 'yes' : 'no') : String(value)
-    if (!valueOf(text, KIND_OF_UNIT[size.unit])) throw new Error(`${lesson.title}: ${size.name} has no value.`)
-    return [size.name, { value: text, typed: '' }]
-  }))
-  const worked = workOut(lesson, values)
-  const figures = Object.fromEntries(Object.entries(worked.figures).map(([name, value]) => [name, textOf(value)]))
-  const metal = lesson.sizes.find(size => size.unit === 'metal')
-  const body: PieceStarted = {
-    lesson: job.revision.lessonId, revision: job.revision.id, compiled: job.revision.compiledSha, engine: FIGURE_ENGINE, sizes, figures, plan: '0'.repeat(64),
-    material: metal ? sizes[metal.name]?.value ?? '' : '', practice: job.practice, goods: null, left: job.left, level: job.level, once: { passed: [], samples: {} },
-  }
-  const planned = plan(lesson, body)
-  if (!planned.ok) throw new Error(`${lesson.title}: ${planned.says}`)
-  return { ...body, plan: planSha(planned.turns) }
+  const { lesson, revision } = job
+  const sizes = Object.fromEntries(lesson.sizes.map(size => [size.name, toldOf(size, job.sizes?.[size.name] ?? size.usual)]))
+  const begun = beginWith({ lesson, ids: { lesson: revision.lessonId, revision: revision.id, compiled: revision.compiledSha }, sizes, practice: job.practice, left: job.left, level: job.level, once: { passed: [], samples: {} } })
+  if (!begun.ok) throw new Error(`${lesson.title}: ${begun.says}`)
+  return begun.start
 }
 
 /** A value a hand would measure: near the middle, on the gauge's own steps, inside the limits unless pushed off. */
