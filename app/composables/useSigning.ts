@@ -22,7 +22,7 @@ export function useSigning(): Signing {
     ids.set(judgement, id)
     return id
   }
-  const plainText = (result: SignResult): string => {
+  const resultWords = (result: SignResult): string => {
     if (!result.ok) return result.says
     return result.needsSecondName ? `Signed: ${levelWords(result.level)}. It stands on one signature until a second name.` : `Signed: ${levelWords(result.level)}.`
   }
@@ -35,7 +35,7 @@ export function useSigning(): Signing {
       const answer = await $fetch('/api/sign-offs', { method: 'POST', body })
       for (const result of answer.results) {
         const item = items.find(one => idOf(one.judgement) === result.id)
-        if (item) results.value[item.judgement] = { ok: result.ok, says: plainText(result) }
+        if (item) results.value[item.judgement] = { ok: result.ok, label: `${item.label}, ${item.maker}`, says: resultWords(result) }
       }
       return answer.results.some(result => result.ok)
     }

@@ -27,7 +27,7 @@ export function bareEvidence(row: Pick<PieceRow, 'id' | 'label' | 'finishedOn'>,
 /** Rows of marks as they were given. */
 export function marksGiven(rows: readonly MarkRow[]): Marks {
   return Object.fromEntries(rows.filter(row => row.says !== null || row.value !== null).map(row => [row.criterion, {
-    ...row.says === null ? {} : { says: row.says }, ...row.value === null ? {} : { value: row.value }, ...row.rest ? { rest: true } : {},
+    ...row.says === null ? {} : { says: row.says }, ...row.value === null ? {} : { value: row.value }, ...row.rest ? { rest: true as const } : {},
   }]))
 }
 

@@ -9,7 +9,7 @@ export interface Given {
   /** Decimal text, in the reading's base unit. */
   value?: string
   /** By "the rest are yes". */
-  rest?: boolean
+  rest?: true
 }
 export type Marks = Readonly<Record<string, Given>>
 

@@ -28,3 +28,10 @@ export function measureWords(value: number, step: number | null): string {
   const places = step === null ? 1 : Math.min(2, Math.max(0, Math.ceil(-Math.log10(step) - 1e-9)))
   return value.toFixed(places)
 }
+
+const MONTHS = ['Jan', 'Feb', 'Mar', 'Apr', 'May', 'Jun', 'Jul', 'Aug', 'Sep', 'Oct', 'Nov', 'Dec']
+/** "27 Oct 2026" from a day or from a moment as text. */
+export function dayWords(at: string): string {
+  const [year = '', month = '', day = ''] = at.slice(0, 10).split('-')
+  return `${Number(day)} ${MONTHS[Number(month) - 1] ?? month} ${year}`
+}
