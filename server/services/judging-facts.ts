@@ -11,7 +11,7 @@ import { standings } from '../db/schema/judging'
 import { lessons, revisions } from '../db/schema/lessons'
 import { relations } from '../db/schema/studio'
 import type { Actor } from './actor'
-import { piecesJudged } from './evidence'
+import { type PieceJudged, piecesJudged } from './evidence'
 import { currentNames, nameIn } from './names'
 import { heldPermissions } from './permissions'
 import { judgingSettingRows, zoneOf } from './standings'
@@ -62,13 +62,13 @@ async function neededLessons(db: DbOrTx, studioId: string, makerId: string, less
 
 export type FactsBefore = Omit<GateFacts, 'piece'>
 
-/** All a gate asks but the piece in hand. */
-export async function gateFacts(db: DbOrTx, who: Actor, makerId: string, lessonId: string, lesson: Lesson, now: Date): Promise<FactsBefore> {
+/** All a gate asks but the piece in hand. `judged`: what was read already of the pieces before. */
+export async function gateFacts(db: DbOrTx, who: Actor, makerId: string, lessonId: string, lesson: Lesson, now: Date, judged?: readonly PieceJudged[]): Promise<FactsBefore> {
   const today = await todayOf(db, who.studioId, now)
   const held = await heldBy(db, who.studioId, makerId, [lessonId])
   return {
     ...await pairOf(db, who, makerId, lessonId, today), held: held.get(lessonId) ?? NOTHING_HELD,
     needs: await neededLessons(db, who.studioId, makerId, lesson, today), permissions: await heldPermissions(db, who.studioId, makerId, lesson.permissions),
-    before: (await piecesJudged(db, who.studioId, makerId, lessonId)).map(one => one.evidence),
+    before: (judged ?? await piecesJudged(db, who.studioId, makerId, lessonId)).map(one => one.evidence),
   }
 }

@@ -24,9 +24,9 @@ export async function lookView(db: Db, who: Actor, pieceId: string, now: Date): 
   const row = await visiblePiece(db, who, pieceId)
   const { set, state } = await foldRow(db, row, await compiledLesson(db, who.studioId, row.revisionId))
   if (!set) refuse(404, 'This piece has not begun.')
-  const facts = await gateFacts(db, who, row.personId, row.lessonId, set.lesson, now)
-  const lines = linesOf(set, state)
   const before = await piecesJudged(db, who.studioId, row.personId, row.lessonId)
+  const facts = await gateFacts(db, who, row.personId, row.lessonId, set.lesson, now, before)
+  const lines = linesOf(set, state)
   const kept = await photosOf(db, who.studioId, row, set, state)
   const names = await currentNames(db, [row.personId])
   return {

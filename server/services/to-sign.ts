@@ -40,8 +40,8 @@ export interface LevelAsked { gate: Gate, judgements: string[] }
 /** What stands in the way of a judged level now, and the judgements it rests on, its own first. */
 export async function levelAsked(db: DbOrTx, who: Actor, piece: typeof pieces.$inferSelect, judgement: typeof judgements.$inferSelect, now: Date): Promise<LevelAsked | null> {
   const lesson = await compiledLesson(db, who.studioId, piece.revisionId)
-  const facts = await gateFacts(db, who, piece.personId, piece.lessonId, lesson, now)
   const judged = await piecesJudged(db, who.studioId, piece.personId, piece.lessonId)
+  const facts = await gateFacts(db, who, piece.personId, piece.lessonId, lesson, now, judged)
   const own = judged.find(one => one.judgement.id === judgement.id)
   if (!own) return null
   // What was judged after it does not carry it.
