@@ -4,13 +4,15 @@ import { LENGTH_UNITS } from '#shared/lesson/shown'
 
 const PersonSchema = z.object({ id: z.string(), name: z.string(), hand: z.enum(HANDS), textSize: z.number(), ground: z.enum(GROUNDS) })
 export type BenchPerson = z.infer<typeof PersonSchema>
-const MeSchema = z.object({ person: PersonSchema })
+const MeSchema = z.object({ person: PersonSchema, may: z.array(z.string()) })
 const ChoicesSchema = z.object({ units: z.enum(LENGTH_UNITS).catch('mm'), bench: z.string().catch('') }).catch({ units: 'mm', bench: '' })
 
 /** Who is at this bench. Where the studio cannot be reached, whoever it was last: the bench comes first. */
 export function useBenchPerson() {
   const person = useState<BenchPerson | null>('bench-person', () => null)
   const kept = useLocalStorage<BenchPerson | null>('thirdhand-bench-person', null, { serializer: jsonOf(PersonSchema.nullable().catch(null)) })
+  /** May they look at a hold? */
+  const mayLook = useState('bench-may-look', () => false)
   const outbox = useOutboxStore()
   const ground = useState<string>('ground', () => 'paper')
   useHead({ htmlAttrs: { style: () => `font-size: ${(person.value?.textSize ?? 100) * 0.16}px` } })
@@ -22,7 +24,7 @@ export function useBenchPerson() {
       const me = MeSchema.safeParse(answer?._data)
       if (answer?.status === 401) { kept.value = null; return 'who' }
       person.value = me.success ? me.data.person : kept.value
-      if (me.success) kept.value = me.data.person
+      if (me.success) { kept.value = me.data.person; mayLook.value = me.data.may.includes('witness') }
     }
     if (!person.value) return 'away'
     ground.value = person.value.ground
@@ -37,7 +39,7 @@ export function useBenchPerson() {
     clearNuxtData('me')
     await navigateTo('/come-in')
   }
-  return { person, ready, leave }
+  return { person, mayLook, ready, leave }
 }
 
 /** What is chosen for this tablet: units, and the name of the bench it stands at. */

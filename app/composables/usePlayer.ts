@@ -4,7 +4,7 @@ import { placeIndex, type SetOut, type State, stepOf, type Turn } from '#shared/
 import type { Answer, Bodies } from '#shared/bench/events'
 import { sha256 } from '#shared/lesson/canonical'
 import type { Step } from '#shared/lesson/schema'
-import { backFrom, bytesOf, isMet, onFrom } from '~/utils/bench/player'
+import { backFrom, bytesOf, isMet, onFrom, saysNothing } from '~/utils/bench/player'
 import type { MadePhoto } from '~/utils/bench/photo'
 
 export interface Player {
@@ -46,6 +46,11 @@ export function usePlayer(): Player {
   const isOpenMet = computed(() => Boolean(open.value && set.value && state.value && placed.value && isMet(set.value, state.value, placed.value, open.value, now.value.getTime())))
   const wire = computed(() => set.value && state.value ? wireOf(set.value, state.value, viewing.value ?? placeIndex(set.value, state.value)) : [])
   watch(() => `${state.value?.place} ${state.value?.round}`, () => { open.value = null; viewing.value = null })
+  // A step that is nothing but what it asks shows that at once, and no empty sheet before it.
+  watchEffect(() => {
+    const [need] = needs.value
+    if (viewing.value === null && !open.value && place.value?.kind === 'step' && need && need.kind !== 'wait' && shown.value && saysNothing(shown.value.step)) open.value = need
+  })
 
   async function next(early = false): Promise<void> {
     if (!set.value || !state.value) return
@@ -65,7 +70,7 @@ export function usePlayer(): Player {
 
   function back(): void {
     if (!set.value || !state.value) return
-    if (viewing.value === null && open.value) { open.value = null; return }
+    if (viewing.value === null && open.value && shown.value && !saysNothing(shown.value.step)) { open.value = null; return }
     viewing.value = backFrom(set.value, state.value, viewing.value) ?? viewing.value
   }
 

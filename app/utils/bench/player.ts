@@ -1,4 +1,5 @@
 /** What the player's screen shows beside the piece itself; pure, and tested without a screen. */
+import type { AnyEvent } from '#shared/bench/events'
 import { needsOf, type Need } from '#shared/bench/screen'
 import { placeIndex, type SetOut, type State, stepOf, type Turn } from '#shared/bench/machine'
 import type { Inline, Step } from '#shared/lesson/schema'
@@ -32,6 +33,16 @@ export function lastShown(set: SetOut, at: number): { turn: Turn, step: Step } |
     if (turn && step && (turn.drawings.length > 0 || step.pictures.length > 0)) return { turn, step }
   }
   return null
+}
+
+/** Has a step nothing to say or show of its own beside its title? */
+export const saysNothing = (step: Step): boolean => step.text.length === 0 && step.safety.length === 0 && step.pictures.length === 0 && step.drawings.length === 0 && step.feel.length === 0
+
+/** Where a piece was put away, when that was not here. */
+export function putAwaySays(events: readonly AnyEvent[], tablet: string): string {
+  const away = events.find(event => event.kind === 'piece.put-away')
+  if (!away || away.tablet === tablet) return ''
+  return `It was put away on another tablet at ${new Date(away.at).toLocaleTimeString('en-GB', { hour: '2-digit', minute: '2-digit' })}.`
 }
 
 const NEED_SAYS: Record<Need['kind'], string> = { reading: 'then: measure it', photo: 'then: a photo', check: 'then: a question', wait: 'then: it rests' }

@@ -45,6 +45,8 @@ async function sendPiece(db: BenchDb, to: ToStudio, tablet: string, piece: strin
       continue
     }
     await take(db, answer.data, batch)
+    // What came late was decided by another tablet or an instructor: hear it now.
+    if (answer.data.taken.some(one => one.late)) await pull(db, to, piece)
   }
 }
 

@@ -30,6 +30,7 @@ class Studio implements ToStudio {
   stored: StoredEvent[] = []
   photos: string[] = []
   calls: string[] = []
+  late = false
   answer: (events: BenchEvent[]) => number | null = () => null
   refuses: (event: BenchEvent) => boolean = () => false
   private readonly used = new Map<string, number>()
@@ -53,8 +54,8 @@ class Studio implements ToStudio {
       if (event.seq !== next) { out.refused = { id: event.id, reason: 'seq', says: 'Acts before this one have not arrived.', expected: next }; break }
       this.used.set(event.tablet, event.seq)
       if (this.refuses(event)) { out.refused = { id: event.id, reason: 'not-there-yet', says: 'Steps before this one are still to be done.' }; break }
-      this.stored.push({ ...event, n: this.stored.length + 1, late: false })
-      out.taken.push({ id: event.id, n: this.stored.length, late: false })
+      this.stored.push({ ...event, n: this.stored.length + 1, late: this.late })
+      out.taken.push({ id: event.id, n: this.stored.length, late: this.late })
     }
     return { status: out.refused ? 422 : 200, data: out }
   }
@@ -184,6 +185,20 @@ describe('sending', () => {
     await begin()
     expect(await sendAll(db, studio, tablet, id(), clock)).toBe('sent')
     expect(studio.calls).toEqual([])
+  })
+})
+
+describe('another tablet', () => {
+  it('decided first: what comes late is told at once, with what decided it', async () => {
+    await begin()
+    await send()
+    const { state } = fold(of, kept.id, asEvents(await events()))
+    studio.stored.push({ id: id(), piece: kept.id, round: state.round, tablet: id(), seq: 1, actor: person, kind: 'piece.put-away', v: 1, at: clock(), since: null, body: { why: 'broken', words: null }, n: 2, late: false })
+    studio.late = true
+    await act('hold.answered', { turn: 'cut', ask: 0, answer: { choice: 'right' } })
+    expect(await send()).toBe('sent')
+    expect((await stateNow()).status).toBe('put-away')
+    expect(await act('fault.seen', { turn: 'cut', fault: 'tight' })).toMatchObject({ ok: false, says: 'This piece was put away.' })
   })
 })
 
