@@ -1,12 +1,6 @@
-import type { Compiled, Lesson } from '#shared/lesson/schema'
+import type { Compiled } from '#shared/lesson/schema'
+import { openCompiler, type CompileAsk } from '~/utils/author/compiler'
 
-export interface CompileWith {
-  /** Names of the pictures beside the text. */
-  pictures: string[]
-  /** Slugs of the studio's lessons. */
-  lessons: string[]
-  previous: Lesson | null
-}
 export interface CompiledText {
   /** The last text that was compiled, with its lesson and findings; null until the first is done. */
   result: Ref<(Compiled & { source: string }) | null>
@@ -17,18 +11,24 @@ export interface CompiledText {
 /** Milliseconds of rest before a text is compiled. */
 const REST = 350
 
-/** The lesson and findings of a text as it is written. The compiler comes only with this page: no other needs it. */
-export function useCompiledText(source: Ref<string>, context: MaybeRefOrGetter<CompileWith>): CompiledText {
+/** The lesson and findings of a text as it is written. */
+export function useCompiledText(source: Ref<string>, context: MaybeRefOrGetter<Omit<CompileAsk, 'no' | 'source'>>): CompiledText {
   const result = shallowRef<(Compiled & { source: string }) | null>(null)
+  const compiler = openCompiler()
+  let asked = 0
 
   async function refresh(): Promise<void> {
-    const { compile } = await import('#shared/lesson/compile')
+    const mine = ++asked
     const text = source.value
     const { pictures, lessons, previous } = toValue(context)
-    result.value = { ...compile(text, { pictures: new Set(pictures), lessons: new Set(lessons), previous }), source: text }
+    // A worker takes plain values only.
+    const compiled = await compiler.compile({ source: text, pictures: [...pictures], lessons: [...lessons], previous: toRaw(previous) })
+    // Of two answers the later question's stands.
+    if (mine === asked) result.value = { ...compiled, source: text }
   }
 
   watchDebounced([source, () => toValue(context)], refresh, { debounce: REST, maxWait: REST * 4 })
   onMounted(refresh)
+  onScopeDispose(compiler.close)
   return { result, refresh }
 }

@@ -8,13 +8,12 @@ export interface WireMark {
   line: number
   /** The step's number; a hold stands before its step and has none. */
   no: number
-  title: string
 }
 
 /** Steps and holds in the order of the text. A lesson that came with nothing has none. */
-export function wireMarks(lesson: Lesson, titleOf: (lesson: Lesson, no: number) => string): WireMark[] {
+export function wireMarks(lesson: Lesson): WireMark[] {
   return stepPlaces(lesson).flatMap(({ step, no }) => [
-    { kind: 'step' as const, line: step.range.line, no, title: titleOf(lesson, no) },
-    ...step.holds.map(hold => ({ kind: 'hold' as const, line: hold.range.line, no, title: titleOf(lesson, no) })),
+    { kind: 'step' as const, line: step.range.line, no },
+    ...step.holds.map(hold => ({ kind: 'hold' as const, line: hold.range.line, no })),
   ]).sort((a, b) => a.line - b.line)
 }
