@@ -50,6 +50,8 @@ export default defineNuxtConfig({
     '/lessons/*/write': { ssr: false },
     // A photograph for a lesson comes as it is; the handler counts its bytes.
     '/api/lessons/*/pictures': { security: { requestSizeLimiter: { maxRequestSizeInBytes: 32_100_000 } } },
+    // A photo larger than 20 MB gets its own sentence from the handler.
+    '/api/photos/*': { security: { requestSizeLimiter: { maxRequestSizeInBytes: 32_100_000 } } },
     '/api/**': { headers: { 'cache-control': 'no-store' } },
   },
   security: {
