@@ -12,7 +12,7 @@ export default defineConfig({
       { resolve: { alias }, test: { name: 'checks', include: ['tests/checks/**/*.test.ts'], environment: 'node' } },
       { resolve: { alias }, test: { name: 'api', include: ['tests/api/**/*.test.ts'], environment: 'node', fileParallelism: false, testTimeout: 60_000, hookTimeout: 120_000 } },
       await defineVitestProject({
-        test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', environmentOptions: { nuxt: { domEnvironment: 'happy-dom' } } },
+        test: { name: 'nuxt', include: ['tests/nuxt/**/*.test.ts'], environment: 'nuxt', hookTimeout: 60_000, testTimeout: 30_000, environmentOptions: { nuxt: { domEnvironment: 'happy-dom' } } },
       }),
     ],
   },

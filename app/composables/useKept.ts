@@ -1,12 +1,14 @@
 import type { Ref } from 'vue'
+import type { Me } from '#shared/types/entry'
 
 /**
  * A form's draft that outlives a closed tab, an ended session and a lost network: kept on this device until it is sent.
- * `key` names the form, `make` an empty one. `forget` clears it and begins anew.
+ * Each person has their own: the device may be anybody's next. `key` names the form, `make` an empty one. `forget` clears it and begins anew.
  */
 export function useKept<T extends object>(key: () => string, make: () => T): { value: Ref<T>, forget: () => void } {
   const value = ref(make()) as Ref<T>
-  const place = () => `kept:${key()}`
+  const { data: me } = useNuxtData<Me>('me')
+  const place = () => `kept:${me.value?.person.id ?? ''}:${key()}`
   const read = () => {
     try {
       const text = localStorage.getItem(place())

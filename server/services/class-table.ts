@@ -1,10 +1,10 @@
-import { and, asc, eq, gte, inArray, isNull, max, or, sql } from 'drizzle-orm'
+import { and, asc, eq, gte, inArray, isNull, lte, max, or, sql } from 'drizzle-orm'
 import { dayIn } from '../../shared/bench/day'
-import { cellOf, type CellFacts, talliesOf, type TableColumn, type TableRow, type Tally } from '../../shared/judging/class-table'
+import { barOf, cellOf, type CellFacts, talliesOf, type TableColumn, type TableRow, type Tally } from '../../shared/judging/class-table'
+import { foldPermissions } from '../../shared/judging/permissions'
 import type { Permission } from '../../shared/lesson/schema'
-import type { AgeBand } from '../../shared/schemas/lists'
 import type { Db } from '../db/client'
-import { standings } from '../db/schema/judging'
+import { permissionActs, standings } from '../db/schema/judging'
 import { classLessons, lessons, revisions } from '../db/schema/lessons'
 import { pieces } from '../db/schema/pieces'
 import { classPeople, memberships } from '../db/schema/studio'
@@ -15,9 +15,6 @@ import { currentNames, nameIn } from './names'
 
 export interface ClassTable { id: string, name: string, at: string, today: string, columns: TableColumn[], rows: TableRow[], tallies: Tally[] }
 
-/** This studio's rule for who is under age: these are not open to them. */
-const NOT_UNDER_AGE: readonly Permission[] = ['flame', 'motors', 'mill']
-
 /** The class's people down, its lessons across, and where each stands: one query over the standings. */
 export async function classTable(db: Db, who: Actor, classId: string, now: Date): Promise<ClassTable> {
   const { id, name } = await classOf(db, who.studioId, classId)
@@ -27,15 +24,22 @@ export async function classTable(db: Db, who: Actor, classId: string, now: Date)
   const people = [...new Map(cells.map(cell => [cell.person, cell.ageBand])).entries()]
   const names = await currentNames(db, people.map(([person]) => person))
   const last = await lastAtBench(db, who.studioId, people.map(([person]) => person), zone)
+  const held = await permissionsOf(db, who.studioId, people.map(([person]) => person), columns.some(column => column.permissions.length > 0))
   const byCell = new Map(cells.map(cell => [`${cell.person} ${cell.lesson}`, cell.standing]))
   const rows = people.map(([person, ageBand]): TableRow => ({
     id: person, name: nameIn(names, person), lastAt: last.get(person) ?? null,
-    cells: columns.map(({ id: lesson, permissions }) => cellOf({ person, lesson }, factsOf(byCell.get(`${person} ${lesson}`) ?? null, zone), isClosed(ageBand, permissions), settings, today)),
+    cells: columns.map(({ id: lesson, permissions }) => cellOf({ person, lesson }, factsOf(byCell.get(`${person} ${lesson}`) ?? null, zone), barOf(permissions, held.get(person) ?? {}, ageBand, settings), settings, today)),
   })).sort((a, b) => a.name.localeCompare(b.name))
   return { id, name, at: now.toISOString(), today, columns: columns.map(({ permissions: _permissions, ...column }) => column), rows, tallies: talliesOf(rows, today) }
 }
 
-const isClosed = (age: AgeBand, permissions: readonly Permission[]): boolean => age !== 'adult' && permissions.some(permission => NOT_UNDER_AGE.includes(permission))
+/** What each holds of the permissions; not asked where no lesson of the class needs one. */
+async function permissionsOf(db: Db, studioId: string, people: readonly string[], isNeeded: boolean) {
+  if (!isNeeded || people.length === 0) return new Map<string, ReturnType<typeof foldPermissions>>()
+  const acts = await db.select({ person: permissionActs.personId, permission: permissionActs.permission, act: permissionActs.act }).from(permissionActs)
+    .where(and(eq(permissionActs.studioId, studioId), inArray(permissionActs.personId, [...people]))).orderBy(asc(permissionActs.at), asc(permissionActs.id))
+  return new Map(people.map(person => [person, foldPermissions(acts.filter(act => act.person === person))] as const))
+}
 
 async function columnsOf(db: Db, studioId: string, classId: string): Promise<(TableColumn & { permissions: Permission[] })[]> {
   const rows = await db.select({ id: lessons.id, slug: lessons.slug, title: revisions.title, permissions: sql<string | null>`JSON_EXTRACT(${revisions.compiled}, '$.permissions')` }).from(classLessons)
@@ -51,7 +55,7 @@ export async function tableQuery(db: Db, studioId: string, classId: string, toda
     .innerJoin(memberships, and(eq(memberships.studioId, classPeople.studioId), eq(memberships.personId, classPeople.personId)))
     .leftJoin(classLessons, and(eq(classLessons.studioId, classPeople.studioId), eq(classLessons.classId, classPeople.classId)))
     .leftJoin(standings, and(eq(standings.studioId, classPeople.studioId), eq(standings.personId, classPeople.personId), eq(standings.lessonId, classLessons.lessonId)))
-    .where(and(eq(classPeople.studioId, studioId), eq(classPeople.classId, classId), isNull(memberships.leftAt), or(isNull(classPeople.untilOn), gte(classPeople.untilOn, today))))
+    .where(and(eq(classPeople.studioId, studioId), eq(classPeople.classId, classId), isNull(memberships.leftAt), lte(classPeople.fromOn, today), or(isNull(classPeople.untilOn), gte(classPeople.untilOn, today))))
 }
 
 function factsOf(row: typeof standings.$inferSelect | null, zone: string): CellFacts | null {
