@@ -15,8 +15,9 @@ export function readTyped(text: string, unit: TypedUnit): TypedValue {
   const plain = text.trim().toLowerCase().replace(/,(?=\d)/, '.').replace('½', ' 1/2').replace('¼', ' 1/4').replace('¾', ' 3/4').trim()
   if (plain === '') return no('Missing: a number.')
   if (unit === 'cord') { const cord = cordToMm(plain); if (cord !== null) return { ok: true, value: cord } }
-  const match = /^(-?\d+(?:\.\d+)?|-?\d*\.\d+)?\s*(?:(\d+)\/(\d+))?\s*([a-z"°]*)$/.exec(plain)
-  if (!match || (match[1] === undefined && match[2] === undefined)) return no(`“${text.trim()}” is no number. ${exampleOf(unit)}`)
+  // A space parts whole and fraction: without it 53/64 would be 5 and 3/64.
+  const match = /^(?:(-?\d+(?:\.\d+)?|-?\.\d+)(?=\s|[a-z"°]|$))?\s*(?:(\d+)\/(\d+))?\s*([a-z"°]*)$/.exec(plain)
+  if (!match || (match[1] === undefined && match[2] === undefined) || (match[2] !== undefined && match[1]?.includes('.'))) return no(`“${text.trim()}” is no number. ${exampleOf(unit)}`)
   const number = Number(match[1] ?? 0) + (match[2] ? Number(match[2]) / Number(match[3]) : 0)
   if (!Number.isFinite(number)) return no(`“${text.trim()}” is no number. ${exampleOf(unit)}`)
   return inUnit(number, match[4] ?? '', unit, text.trim())
