@@ -1,5 +1,5 @@
 /** The demo studio, made through the same services as everything else, in time order with a moved clock. */
-import { eq } from 'drizzle-orm'
+import { and, eq, lt } from 'drizzle-orm'
 import { ulid } from 'ulid'
 import type { Lesson } from '../../../shared/lesson/schema'
 import type { Db } from '../client'
@@ -44,6 +44,8 @@ export async function seedDemo(db: Db, files: Files, { now, lessons, passwordHas
   const planned = demoPieces(now, keeps)
   say(`${planned.length} pieces are made, judged and signed ...`)
   await work(demo, planned, now)
+  // Notes are read at the next evening; only this week's are still to be read.
+  await db.update(notes).set({ shownAt: now }).where(and(eq(notes.studioId, demo.studioId), lt(notes.at, new Date(now.getTime() - 6 * DAY))))
 }
 
 async function openStudio(db: Db, files: Files, at: Date, passwordHash: string): Promise<Demo> {
