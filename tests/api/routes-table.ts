@@ -91,6 +91,8 @@ export const ROUTES: Record<string, Line> = {
   'photos/[photo].get.ts': { guard: 'member' },
   'photos/[photo].put.ts': { guard: 'make-pieces', raw: PICTURE },
 
+  'record/[person].get.ts': { guard: 'member' },
+
   'looks/index.get.ts': { guard: 'see-pieces' },
   'looks/count.get.ts': { guard: 'see-pieces' },
   'looks/[piece].get.ts': { guard: 'see-pieces' },
