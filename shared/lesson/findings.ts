@@ -10,7 +10,7 @@ export const CODES = {
   'step-missing': 'error', 'tab': 'advice', 'heading-space': 'advice',
   // names and figures
   'bad-name': 'error', 'duplicate-name': 'error', 'unknown-name': 'error', 'unknown-function': 'error', 'function-not-yet': 'error', 'expression': 'error', 'wrong-kind': 'error', 'figure-fails': 'error',
-  'unknown-reading': 'error', 'unknown-figure': 'error', 'usual-outside': 'error', 'repeat-not-count': 'error',
+  'unknown-reading': 'error', 'unknown-figure': 'error', 'unknown-choice': 'error', 'usual-outside': 'error', 'repeat-not-count': 'error',
   // steps
   'duplicate-key': 'error', 'hold-no-consequence': 'error', 'hold-cannot-fail': 'error', 'hold-not-first': 'error', 'hold-after-deed': 'error', 'holds-without-when': 'error', 'hold-no-wrong': 'error',
   'choice-no-fault': 'error', 'choice-right-fault': 'error', 'choice-none-right': 'error', 'choice-count': 'error', 'fault-incomplete': 'error', 'torch-missing': 'error', 'permission-not-said': 'error',

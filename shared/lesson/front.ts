@@ -17,7 +17,8 @@ export interface Front { entries: Entry[], /** Offset of the text after it. */ b
 
 /** Splits the front matter off and reads it. Everything wrong is a finding; nothing throws. */
 export function readFront(source: string, findings: Findings): Front {
-  const open = /^---[ \t]*\r?\n/.exec(source)
+  // An editor may have put a byte order mark before the first line.
+  const open = /^\uFEFF?---[ \t]*\r?\n/.exec(source)
   const close = open ? /\r?\n---[ \t]*(\r?\n|$)/.exec(source.slice(open[0].length - 1)) : null
   if (!open || !close) {
     findings.add('front-matter-missing', { from: 0, to: Math.min(3, source.length) }, 'A lesson begins with a line of three hyphens, its front matter, and three hyphens again.')

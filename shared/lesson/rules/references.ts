@@ -14,10 +14,19 @@ export const references: Rule = (context) => {
   for (const part of lesson.parts) {
     for (const step of part.steps) {
       for (const here of step.readings) known(here.reading, here.range)
-      for (const hold of step.holds) for (const ask of hold.asks) if (ask.kind === 'measure') known(ask.reading, hold.range)
+      for (const hold of step.holds) for (const ask of hold.asks) if (ask.kind === 'measure') { known(ask.reading, hold.range); canFail(context, ask.reading, hold.range) }
     }
   }
   figures(context)
+}
+
+/** A measure at a hold is held against something: with no middle or no tolerance any number would pass. */
+function canFail({ lesson, add }: Context, name: string, at: { from: number, to: number }): void {
+  const reading = lesson.readings.find(one => one.name === name)
+  if (!reading) return
+  const held = reading.sampleOf === null ? reading : lesson.readings.find(one => one.name === reading.sampleOf)
+  if (held?.is && (reading.within || reading.atLevels.length > 0)) return
+  add('hold-cannot-fail', at, `Any number passes this hold: the reading ${name} ${held?.is ? 'has no within' : 'does not say what it is to be'}. Give it is: and within:.`)
 }
 
 /** `{` before a letter is a size or figure, or `\{`. Not in code, links or front matter. */

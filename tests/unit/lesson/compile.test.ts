@@ -94,6 +94,12 @@ describe('whatever it is given', () => {
     }), { numRuns: runs })
   }, minutes)
 
+  it('reads a file an editor has put a byte order mark before, at the same lines', () => {
+    const marked = compile(`\uFEFF${base}`)
+    expect(marked.lesson.title).toBe(compile(base).lesson.title)
+    expect(marked.findings.map(({ code, line }) => [code, line])).toEqual(compile(base).findings.map(({ code, line }) => [code, line]))
+  })
+
   it('reads any text at all', () => {
     fc.assert(fc.property(fc.string({ maxLength: 400, unit: 'binary' }), (text) => {
       expect(LessonSchema.safeParse(compile(text).lesson).success).toBe(true)
