@@ -7,10 +7,10 @@ const standing = (x, y, r = 50) => p.loop(x, y, r)
 const onBead = (...parts) => [p.bead(330, 420, 110), ...parts]
 
 export const LINK = {
-  'straighten': ['Wire drawn through nylon jaws', p.wire('M30 300C120 210 180 250 250 220'), p.wire('M250 220H630'), p.at(250, 220, 90, p.flatNose(7)), p.arrow('M520 170H600', [604, 170], 0), p.text(560, 150, 'draw', 26, p.GARNET), p.text(40, 390, 'low, away', 24, p.INK, 'start')],
+  'straighten': ['Wire drawn through nylon jaws', p.wire('M30 300C120 210 180 250 250 220'), p.wire('M250 220H630'), p.at(250, 220, 90, p.flatNose(7)), p.arrow('M520 170H600', [604, 170], 0)],
   'bead-hole': ['A bead under the loupe', p.bead(330, 220, 150), p.hole(370, 190, 34), p.loupe(350, 205, 175), p.look(370, 190, 62)],
   'cut': ['Cutter at the mark, finger on the offcut', p.at(60, 300, 0, p.rule(540, 40)), p.wire('M60 278H600'), p.at(430, 278, -90, p.cutter(9)), p.at(470, 270, 0, p.finger(150)), p.look(430, 278, 30)],
-  'mark': ['Ink mark on the wire beside the rule', p.at(60, 250, 0, p.rule(540, 40)), p.wire('M60 226H600'), p.line('M330 208V244', 6), p.arrow('M330 110V180', [330, 186], 90), p.text(330, 92, 'mark', 28, p.GARNET)],
+  'mark': ['Ink mark on the wire beside the rule', p.at(60, 250, 0, p.rule(540, 40)), p.wire('M60 226H600'), p.line('M330 208V244', 6), p.arrow('M330 110V180', [330, 186], 90)],
   'bend': ['Wire bent square at the jaw', p.wire('M90 250H330V70'), p.at(322, 250, 0, p.flatNose(8)), p.at(250, 120, 40, p.finger(120)), p.arrow('M250 210A90 90 0 0 1 310 130', [312, 124], -60)],
   'circle': ['Jaw moved round, wire crossing in front of the neck', ...onBead(neck(330, 320, 244), p.at(330, 176, 0, p.roundNose(12)), standing(330, 176, 56), p.wire('M330 232C300 236 280 262 262 300'), p.arrow('M420 80A120 120 0 0 0 250 100', [246, 106], 130))],
   'centre': ['The line of the wire through the middle of the loop', ...onBead(neck(330, 320, 250), standing(330, 180, 62), p.line('M330 60V420', 3, p.GARNET), p.wire('M330 244H230'))],

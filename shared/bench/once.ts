@@ -8,7 +8,9 @@ import type { State } from './state'
 export interface OnceFact { state: State }
 export type Once = PieceStarted['once']
 
-const sameSizes = (a: PieceStarted, b: PieceStarted): boolean => canonical(a.sizes) === canonical(b.sizes)
+/** The same sizes, however they were typed. */
+const valuesOf = (sizes: PieceStarted['sizes']): string => canonical(Object.fromEntries(Object.entries(sizes).map(([name, told]) => [name, told.value])))
+const sameSizes = (a: PieceStarted, b: PieceStarted): boolean => valuesOf(a.sizes) === valuesOf(b.sizes)
 const dayOf = (at: string | null): string => at?.slice(0, 10) ?? ''
 
 /** What a new piece need not ask again, from the person's earlier pieces of the same revision; `day` is YYYY-MM-DD (UTC). */
@@ -17,7 +19,7 @@ export function onceFrom(lesson: Lesson, sizes: PieceStarted['sizes'], earlier: 
   const samples: Record<string, string> = {}
   for (const { state } of [...earlier].reverse()) {
     if (!state.start || dayOf(state.startedAt) !== day) continue
-    const same = canonical(state.start.sizes) === canonical(sizes)
+    const same = valuesOf(state.start.sizes) === valuesOf(sizes)
     for (const key of passedIn(lesson, state, same)) passed.add(key)
     if (same) for (const [name, value] of Object.entries(kept(lesson, state))) samples[name] = String(Number(value.toFixed(6)))
   }
