@@ -61,7 +61,7 @@ test('an invitation goes by letter to a new person, who is then in the class', a
   await dialog.getByRole('button', { name: 'Send the letter' }).click()
   await expect(page.getByRole('heading', { name: 'Asked, and not come yet' })).toBeVisible()
 
-  const other = await browser.newPage()
+  const other = await (await browser.newContext()).newPage()
   await expect(async () => {
     await other.goto('/mail')
     await expect(other.getByText(`to ${email}`)).toBeVisible({ timeout: 1000 })
@@ -76,7 +76,7 @@ test('an invitation goes by letter to a new person, who is then in the class', a
   await other.getByLabel('A password', { exact: true }).fill('nine copper rivets')
   await other.getByRole('button', { name: 'Come in' }).click()
   await expect(other).toHaveURL(/\/bench$/)
-  await other.close()
+  await other.context().close()
   await page.reload()
   await expect(page.getByRole('link', { name })).toBeVisible()
 })
@@ -92,6 +92,7 @@ test('a start card is printed, and lets in who has no e-mail', async ({ page, br
 
   await page.getByRole('link', { name: 'Classes' }).first().click()
   await page.getByRole('link', { name: 'Start cards of Tuesday evening' }).click()
+  await expect(page.getByLabel(name)).toBeVisible()
   for (const box of await page.getByRole('checkbox').all()) await box.uncheck()
   await page.getByLabel(name).check()
   await page.getByRole('button', { name: 'Make one card' }).click()
@@ -101,7 +102,7 @@ test('a start card is printed, and lets in who has no e-mail', async ({ page, br
   await expect(page.getByRole('button', { name: 'Print the sheet' })).toBeHidden()
   await expect(page.locator('[data-code]')).toBeVisible()
 
-  const tablet = await browser.newPage()
+  const tablet = await (await browser.newContext()).newPage()
   await tablet.goto('/come-in')
   await tablet.getByRole('link', { name: 'I have a card' }).click()
   await isFair(tablet)
@@ -111,7 +112,7 @@ test('a start card is printed, and lets in who has no e-mail', async ({ page, br
   await tablet.getByLabel('Code on the card').fill(code.toLowerCase())
   await tablet.getByRole('button', { name: 'Come in' }).click()
   await expect(tablet).toHaveURL(/\/bench$/)
-  await tablet.close()
+  await tablet.context().close()
 })
 
 test('a class is made and filled; parts are given and ended', async ({ page }) => {
