@@ -4,7 +4,8 @@ import type { Me } from '#shared/types/entry'
 const OPEN = /^\/(?:come-in|mail|bench)(?:\/|$)/
 
 export default defineNuxtRouteMiddleware(async (to) => {
-  if (OPEN.test(to.path) || useNuxtData<Me>('me').data.value) return
+  // What is no page at all says so to everyone.
+  if (to.matched.length === 0 || OPEN.test(to.path) || useNuxtData<Me>('me').data.value) return
   const status = await useRequestFetch()('/api/me').then(() => 200, (error: unknown) => error instanceof Error && 'statusCode' in error ? error.statusCode : 0)
   if (status === 401) return navigateTo({ path: '/come-in', query: to.path === '/' ? {} : { next: to.fullPath } }, { replace: true })
 })

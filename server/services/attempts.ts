@@ -7,9 +7,10 @@ import { refuse } from './refuse'
 /**
  * Wrong tries in a quarter of an hour. `account`: one account from one address; `anywhere`: one account from all, higher,
  * so that a stranger elsewhere does not shut its person out; `address`: all accounts from one address, which may be a
- * whole class behind one line; `card`: start cards from one address.
+ * whole class behind one line; `card`: start cards from one address; `signing`: the password asked again of one who is in, who
+ * may press twenty times at once.
  */
-export const LIMITS = { account: 10, anywhere: 60, address: 120, card: 60, letter: 5 } as const
+export const LIMITS = { account: 10, anywhere: 60, address: 120, card: 60, letter: 5, signing: 30 } as const
 export type LimitKind = keyof typeof LIMITS
 const WINDOW_MS = 15 * 60_000
 

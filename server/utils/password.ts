@@ -12,10 +12,10 @@ export function usePasswords(): Passwords {
   return passwords
 }
 
-/** The person's own password once more, for an act that is signed. 422 when it is another one; the same limit as at the door. */
+/** The person's own password once more, for an act that is signed. 422 when it is another one; tries are counted as at the door. */
 export async function requirePassword(event: H3Event, who: Pick<Who, 'personId'>, password: string): Promise<void> {
   const db = useDatabase()
-  await countTry(db, 'account', who.personId, now(event))
+  await countTry(db, 'signing', who.personId, now(event))
   if (!await usePasswords().check(await passwordHashOf(db, who.personId), password)) refuse(422, 'That is not your password. Nothing was signed.', { fieldErrors: { password: ['That is not your password.'] } })
-  await forgetTries(db, 'account', who.personId)
+  await forgetTries(db, 'signing', who.personId)
 }
