@@ -23,7 +23,8 @@ function stopAll() {
 async function main() {
   checkNode()
   const place = placeOf(process.env)
-  const folders = foldersOf()
+  // Another folder than .data, for measuring beside a running studio.
+  const folders = foldersOf(process.env.THIRDHAND_DATA ?? '.data')
   const release = takeLock(folders)
   stops.push(release)
   if (await isTaken(place.port, place.listen)) trouble(`Port ${place.port} is taken by another program. Stop it, or choose another: PORT=${place.port + 1} npm start`)

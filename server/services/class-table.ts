@@ -50,8 +50,8 @@ async function columnsOf(db: Db, studioId: string, classId: string): Promise<(Ta
 }
 
 /** The query of the table: people of the class today x its lessons, with the standing where there is one. */
-export async function tableQuery(db: Db, studioId: string, classId: string, today: string) {
-  return await db.select({ person: classPeople.personId, ageBand: memberships.ageBand, lesson: classLessons.lessonId, standing: standings }).from(classPeople)
+export function tableQuery(db: Db, studioId: string, classId: string, today: string) {
+  return db.select({ person: classPeople.personId, ageBand: memberships.ageBand, lesson: classLessons.lessonId, standing: standings }).from(classPeople)
     .innerJoin(memberships, and(eq(memberships.studioId, classPeople.studioId), eq(memberships.personId, classPeople.personId)))
     .leftJoin(classLessons, and(eq(classLessons.studioId, classPeople.studioId), eq(classLessons.classId, classPeople.classId)))
     .leftJoin(standings, and(eq(standings.studioId, classPeople.studioId), eq(standings.personId, classPeople.personId), eq(standings.lessonId, classLessons.lessonId)))
