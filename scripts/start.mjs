@@ -3,7 +3,7 @@ import { foldersOf } from './lib/folders.mjs'
 import { placeOf } from './lib/host.mjs'
 import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
 import { startMariadb } from './lib/mariadb.mjs'
-import { endLeftOver, takeLock } from './lib/one-at-a-time.mjs'
+import { endLeftOver, noteChild, takeLock } from './lib/one-at-a-time.mjs'
 import { isTaken, until } from './lib/run.mjs'
 import { say, Trouble, trouble } from './lib/say.mjs'
 import { secretsOf } from './lib/secrets.mjs'
@@ -27,10 +27,10 @@ async function main() {
   const folders = foldersOf(process.env.THIRDHAND_DATA ?? '.data')
   const release = takeLock(folders)
   stops.push(release)
+  await endLeftOver(folders, until)
   if (await isTaken(place.port, place.listen)) trouble(`Port ${place.port} is taken by another program. Stop it, or choose another: PORT=${place.port + 1} npm start`)
   await installPrograms(['mariadb-server-core'])
   await installPackages()
-  await endLeftOver(folders, until)
   const secrets = secretsOf(folders)
   const database = await startMariadb(folders, secrets)
   stops.push(() => database.stop())
@@ -47,6 +47,7 @@ async function main() {
     NITRO_PORT: String(place.port), NITRO_HOST: place.listen, PORT: String(place.port), HOST: place.listen, ...place.isLocal ? { NUXT_SESSION_COOKIE_SECURE: 'false' } : { NUXT_SESSION_NAME: '__Host-thirdhand' },
   }, `http${process.env.NITRO_SSL_CERT ? 's' : ''}://${place.listen === '0.0.0.0' ? '127.0.0.1' : place.listen}:${place.port}/api/ready`)
   stops.push(() => server.stop())
+  noteChild(folders, 'server.pid', server.pid)
   server.onExit(() => end(stopping ? 0 : 1))
   database.onExit(() => { if (!stopping) { say('The database ended by itself. Start again: it recovers.'); end(1) } })
   await welcome(place)
@@ -58,6 +59,7 @@ async function mailOf(place, folders) {
   if (own || !place.isLocal) return { smtpUrl: own ?? '', url: '' }
   const catcher = await startCatcher(folders.mail)
   stops.push(() => catcher.stop())
+  noteChild(folders, 'catcher.pid', catcher.pid)
   return catcher
 }
 

@@ -1,4 +1,5 @@
 import { existsSync, mkdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { join } from 'node:path'
 import { trouble } from './say.mjs'
 
 /** Is a process of that number running? */
@@ -36,17 +37,29 @@ export function takeLock(folders) {
   return () => rmSync(folders.lock, { force: true })
 }
 
-/** Ends a database left running by a start that was killed, so that this one may have its folder. */
+/** What a start leaves running when it is killed outright, and how each is known for ours. */
+const LEFT = [['server.pid', '/server/index.mjs'], ['catcher.pid', 'scripts/catcher.ts'], ['mysql.pid', 'mariadbd']]
+
+/** Remembers a process of this folder, so that the next start can end it. */
+export const noteChild = (folders, file, pid) => writeFileSync(join(folders.data, file), String(pid), { mode: 0o600 })
+
+/** Ends what a killed start left running: the application, the catcher, the database. */
 export async function endLeftOver(folders, until) {
-  const file = `${folders.data}/mysql.pid`
-  const pid = Number(existsSync(file) ? readFileSync(file, 'utf8') : 0)
-  if (!(pid > 0) || !isRunning(pid)) return
+  for (const [file, sign] of LEFT) {
+    const path = join(folders.data, file)
+    const pid = Number(existsSync(path) ? readFileSync(path, 'utf8') : 0)
+    if (!(pid > 0) || !isRunning(pid) || !isNamed(pid, sign)) continue
+    process.kill(pid, 'SIGTERM')
+    await until(() => !isRunning(pid), 60, `A process left from before (${pid}) does not stop.`)
+  }
+}
+
+/** Is that number really what we think it is? It may have been given to another program since. */
+function isNamed(pid, sign) {
   try {
-    if (!readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes(folders.mysql)) return
+    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').includes(sign)
   }
   catch {
-    return
+    return false
   }
-  process.kill(pid, 'SIGTERM')
-  await until(() => !isRunning(pid), 60, 'A database left from before does not stop.')
 }

@@ -22,7 +22,7 @@ export async function startCatcher(folder) {
   child.stdout.on('data', (chunk) => { told += chunk })
   await until(() => told.includes('\n'), 20, 'The mail catcher did not start.')
   const { smtp, http } = JSON.parse(told)
-  return { smtpUrl: `smtp://127.0.0.1:${smtp}`, url: `http://127.0.0.1:${http}`, stop: () => end(child) }
+  return { smtpUrl: `smtp://127.0.0.1:${smtp}`, url: `http://127.0.0.1:${http}`, pid: child.pid, stop: () => end(child) }
 }
 
 /** Starts the built application and waits until it answers. */
