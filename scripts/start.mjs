@@ -41,11 +41,14 @@ async function main() {
     await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files })
     await database.patience(true)
   }
+  else if ((await step('scripts/has-demo.ts', [], { NUXT_DATABASE_URL: database.app }, true)).trim() !== 'no') {
+    trouble(`The demo studio is in ${folders.data}, and everyone knows its password: it is not served to other machines. Start the real studio with an empty folder: npm run reset removes the demo.`)
+  }
   await build('.output', '.nuxt')
   const server = await startServer('.output', {
     NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: process.env.NUXT_SESSION_PASSWORD ?? secrets.session, NUXT_SMTP_URL: mail.smtpUrl, NUXT_CATCHER_URL: mail.url, NUXT_PUBLIC_URL: place.url, NUXT_FILES_DIR: folders.files,
     NITRO_PORT: String(place.port), NITRO_HOST: place.listen, PORT: String(place.port), HOST: place.listen, ...place.isLocal ? { NUXT_SESSION_COOKIE_SECURE: 'false' } : { NUXT_SESSION_NAME: '__Host-thirdhand' },
-  }, `http${process.env.NITRO_SSL_CERT ? 's' : ''}://${place.listen === '0.0.0.0' ? '127.0.0.1' : place.listen}:${place.port}/api/ready`)
+  }, `${place.here}/api/ready`)
   stops.push(() => server.stop())
   noteChild(folders, 'server.pid', server.pid)
   server.onExit(() => end(stopping ? 0 : 1))
