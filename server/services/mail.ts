@@ -24,10 +24,19 @@ export interface Post { send: (letter: Letter & { to: string, messageId: string 
 const MOST_TRIES = 8
 const AT_ONCE = 20
 
-/** Sends what is due. A letter that cannot be sent waits longer each time, and is given up, visibly, after eight tries. */
+/** Sends all that is due, however much it is. A letter that cannot be sent waits longer each time, and is given up, visibly, after eight tries. */
 export async function sendWaiting(db: Db, post: Post, now: Date): Promise<number> {
   let sent = 0
-  for (const row of await claim(db, now)) {
+  for (;;) {
+    const rows = await claim(db, now)
+    if (rows.length === 0) return sent
+    sent += await sendRows(db, rows, post, now)
+  }
+}
+
+async function sendRows(db: Db, rows: Awaited<ReturnType<typeof claim>>, post: Post, now: Date): Promise<number> {
+  let sent = 0
+  for (const row of rows) {
     try {
       const to = row.toAddress ?? await addressOf(db, row.toPerson)
       const letter = to ? await letterOf(db, row, post.publicUrl, now) : null

@@ -1,4 +1,4 @@
-import { eq } from 'drizzle-orm'
+import { eq, inArray } from 'drizzle-orm'
 import { ulid } from 'ulid'
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import type { Db } from '#server/db/client'
@@ -224,6 +224,16 @@ describe('the queue', () => {
     const mine = sent.filter(messageId => ids.some(id => messageId.includes(id)))
     expect(new Set(mine).size).toBe(12)
     expect(mine).toHaveLength(12)
+  })
+
+  it('sends a long queue at one kick, and a new letter after it without a wait', async () => {
+    const now = new Date(Date.now() - DAY)
+    const ids = await Promise.all(Array.from({ length: 45 }, () => queue(now)))
+    const email = newAddress()
+    await invite(email)
+    await letterTo(email)
+    const rows = await db.select({ state: mail.state }).from(mail).where(inArray(mail.id, ids))
+    expect(rows.filter(row => row.state === 'sent')).toHaveLength(45)
   })
 
   it('tells no one of another studio what could not be sent', async () => {
