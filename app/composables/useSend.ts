@@ -1,4 +1,3 @@
-import { ofetch } from 'ofetch'
 import type { Ref } from 'vue'
 
 export interface Send {
@@ -25,7 +24,7 @@ export function useSend(): Send {
       faults.value = {}
       status.value = 0
       try {
-        return await ofetch<T>(path, { method, ...body ? { body } : {} })
+        return await $fetch<T, string>(path, { method, ...body ? { body } : {} })
       }
       catch (error) {
         const refusal = refusalOf(error)

@@ -1,5 +1,14 @@
-/** A lesson as an instructor writes it: one of everything the bench asks for. */
-export const hookLesson = (title: string) => `---
+const WITNESSED = `
+HOLD After this the wire is bent for good
+  witness: always
+
+  Which way does the hook open?
+  right: Away from the loop
+  not: Towards the loop -> It cannot be hung. Turn the wire over.
+`
+
+/** A lesson as an instructor writes it: one of everything the bench asks for. `witnessed` has a hold that waits for an instructor. */
+export const hookLesson = (title: string, { witnessed = false } = {}) => `---
 title: ${title}
 craft: wire
 piece: one hook
@@ -51,7 +60,7 @@ FAULT It is short
   do: Straighten it and cut again.
 
 ## Bend the hook
-
+${witnessed ? WITNESSED : ''}
 Roll the wire over the jaw.
 
 READING wide

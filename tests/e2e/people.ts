@@ -1,4 +1,6 @@
 /** Browsers of people, worked by keyboard alone. */
+import { ulid } from 'ulid'
+import { z } from 'zod'
 import { type Browser, type BrowserContext, expect, type Locator, type Page } from '@playwright/test'
 
 export const PASSWORD = 'third hand bench'
@@ -46,6 +48,14 @@ export async function typeInto(page: Page, target: Locator, text: string): Promi
   await page.keyboard.insertText(text)
 }
 
+/** A short press of a key, as a pedal sends it; the next one waits out the bounce. */
+export async function pedal(page: Page, key: string, times = 1): Promise<void> {
+  for (let i = 0; i < times; i++) {
+    await page.keyboard.press(key)
+    await page.waitForFunction(since => performance.now() - since > 340, await page.evaluate(() => performance.now()))
+  }
+}
+
 /** Waits until the page answers to keys: the application has taken the server's page over. */
 export async function awake(page: Page): Promise<void> {
   await page.waitForFunction(() => {
@@ -64,9 +74,22 @@ export async function comeIn({ page }: Person, key: string, password = PASSWORD)
 }
 
 /** Asks the application's own routes as this person, for what is not the matter of a test. */
-export async function ask({ context }: Person, method: 'GET' | 'POST', path: string, body?: unknown): Promise<{ status: number, body: unknown }> {
+export async function ask({ context }: Person, method: 'GET' | 'POST' | 'PUT', path: string, body?: unknown): Promise<{ status: number, body: unknown }> {
   const base = String(process.env.TEST_BASE_URL)
   const answer = await context.request.fetch(`${base}${path}`, { method, data: body, headers: { 'origin': base, 'sec-fetch-site': 'same-origin' } })
   const type = answer.headers()['content-type'] ?? ''
   return { status: answer.status(), body: type.startsWith('application/json') ? await answer.json() : null }
+}
+
+const one = z.object({ id: z.string() })
+/** Puts a lesson of this text into use and into the class of Tuesday evening, through the routes: it is not the matter of a test. */
+export async function lessonInClass(author: Person, manager: Person, title: string, source: string): Promise<{ id: string, slug: string }> {
+  const lesson = one.extend({ slug: z.string() }).parse((await ask(author, 'POST', '/api/lessons', { id: ulid(), title, craft: 'wire' })).body)
+  const draft = z.object({ etag: z.string() }).parse((await ask(author, 'GET', `/api/lessons/${lesson.id}/draft`)).body)
+  const { etag } = z.object({ etag: z.string() }).parse((await ask(author, 'PUT', `/api/lessons/${lesson.id}/draft`, { etag: draft.etag, source })).body)
+  expect((await ask(author, 'POST', `/api/lessons/${lesson.id}/use`, { id: ulid(), etag, effect: 'first', note: 'First revision' })).status).toBe(201)
+  const classes = z.array(one.extend({ name: z.string() })).parse((await ask(manager, 'GET', '/api/classes')).body)
+  const evening = classes.find(each => each.name === 'Tuesday evening')
+  expect((await ask(manager, 'POST', `/api/classes/${evening?.id}/lessons`, { id: ulid(), lessonId: lesson.id })).status).toBeLessThan(300)
+  return lesson
 }

@@ -1,15 +1,7 @@
 import { expect, test } from '@playwright/test'
 import { ulid } from 'ulid'
 import { hookLesson } from './hook-lesson'
-import { ask, awake, comeIn, person, pressOn, tabTo, typeInto } from './people'
-
-/** A short press of a key, as a pedal sends it; the next one waits out the bounce. */
-async function pedal(page: import('@playwright/test').Page, key: string, times = 1): Promise<void> {
-  for (let i = 0; i < times; i++) {
-    await page.keyboard.press(key)
-    await page.waitForFunction(since => performance.now() - since > 340, await page.evaluate(() => performance.now()))
-  }
-}
+import { ask, awake, comeIn, pedal, person, pressOn, tabTo, typeInto } from './people'
 
 /** Walks on with short presses until this is the one that is lit. */
 async function light(page: import('@playwright/test').Page, name: string): Promise<void> {
