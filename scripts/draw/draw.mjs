@@ -1,12 +1,13 @@
 /** Draws the lessons' pictures into content-src. `--check` only says whether they are as drawn. */
 import { existsSync, readFileSync, writeFileSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
+import { CAP_PICTURES } from './cap.mjs'
 import { LINK } from './link.mjs'
 import { picture } from './parts.mjs'
 import { RINGS, SAFETY } from './rings.mjs'
-import { CAP, STRAND } from './strand.mjs'
+import { STRAND } from './strand.mjs'
 
-const LESSONS = { 'wrapped-loop-link': LINK, 'jump-rings': RINGS, 'bench-safety': SAFETY, 'hand-knotted-strand': STRAND, 'coiled-bead-cap': CAP }
+const LESSONS = { 'wrapped-loop-link': LINK, 'jump-rings': RINGS, 'bench-safety': SAFETY, 'hand-knotted-strand': STRAND, 'coiled-bead-cap': CAP_PICTURES }
 const isCheck = process.argv.includes('--check')
 const other = []
 for (const [slug, pictures] of Object.entries(LESSONS)) {
