@@ -6,8 +6,9 @@ root=${1:-$(mktemp -d)/debian}
 here=$(cd "$(dirname "$0")/.." && pwd)
 node=$(dirname "$(dirname "$(readlink -f "$(command -v node)")")")
 
-mirror=$(grep -rhoE '(https?|file)://[^ ]+' /etc/apt/sources.list /etc/apt/sources.list.d 2>/dev/null | head -1)
+mirror=$(apt-get indextargets --format '$(REPO_URI)' 'Created-By: Packages' 'Codename: bookworm' | awk 'NR == 1')
 debootstrap --variant=minbase --include=ca-certificates,git,procps bookworm "$root" "$mirror"
+rm -f "$root/etc/apt/sources.list"
 cp -a /etc/apt/. "$root/etc/apt/"
 cp -a /etc/ssl/certs/. "$root/etc/ssl/certs/" 2>/dev/null || true
 cp /etc/resolv.conf /etc/hosts "$root/etc/" 2>/dev/null || true
