@@ -4,7 +4,8 @@ import { fileURLToPath } from 'node:url'
 import { CAP_PICTURES } from './cap.mjs'
 import { LINK } from './link.mjs'
 import { picture } from './parts.mjs'
-import { RINGS, SAFETY } from './rings.mjs'
+import { RINGS } from './rings.mjs'
+import { SAFETY } from './safety.mjs'
 import { STRAND } from './strand.mjs'
 
 const LESSONS = { 'wrapped-loop-link': LINK, 'jump-rings': RINGS, 'bench-safety': SAFETY, 'hand-knotted-strand': STRAND, 'coiled-bead-cap': CAP_PICTURES }
