@@ -38,7 +38,7 @@ const capTop = (x, y, w, from, to) => Array.from({ length: Math.round((to - from
 })
 const loopTop = (x, y, w) => {
   const [, foot] = seen(x, y, w, 0, stands(0) - 0.5, 0)
-  const bend = foot - 1.7 * w * Math.cos(TILT)
+  const bend = foot - 2.3 * w * Math.cos(TILT)
   const r = k.ROUND * 0.9 * w
   return k.rope(`M${x} ${n(foot)}V${n(bend)}`, w) + k.rope(`M${x} ${n(bend)}A${r} ${n(r * Math.cos(TILT) + 2)} 0 1 0 ${x - 1} ${n(bend)}`, w)
 }
@@ -92,10 +92,11 @@ export const CAP_PICTURES = {
   'guard': ['Tape round the middle of a faceted bead, both shoulders bare', p.bead(330, 220, 180), round(330, 220, 180, [66, 40, 13, -13, -40, -66]), belt(330, 220, 180, -62, 62), p.hole(330, 82, 17)],
   'first-loop': ['First loop centred on the wire, both ends long', k.closed(k.work(190, 270, -1, 20), 30, 11), k.sight('M60 270H640')],
   'close-first': ['One turn round the neck, the end still long', k.closed(k.work(190, 270, -1, 20), 30), k.wound(k.work(190, 270, -1, 20), [1.87], 11), p.look(226, 270, 44)],
+  'thread': ['Bead slid along the wire to the one turn at the first loop', k.closed(k.work(160, 270, -1, 18), 30), k.wound(k.work(160, 270, -1, 18), [1.87], 9), p.bead(400, 270, R * 18), p.arrow('M470 90H350', [344, 90], 180)],
   'second-loop': ['Both loops turned and in one plane, the bead between, both ends long', longEnds, p.bead(330, 270, R * 18)],
   'cap': ['Cap coiled outward over the shoulder, each turn touching the last', p.bead(300, 290, 165), k.rope(path(capTop(300, 290, 22, -0.4, 3)) + 'L640 268', 22), loopTop(300, 290, 22), k.rope(path(capTop(300, 290, 22, -0.22, 0.22)), 22), p.arrow('M612 222A190 130 0 0 0 520 120', [515, 117], 215)],
   'hooks': ['Both legs hooked at the end, one the mirror of the other', linkSide(330, 290, 18), hooked(330 - stands(3.25) * 18, 290, 18, 1), hooked(330 + stands(3.25) * 18, 290, 18, -1), k.ghost('M330 20V130')],
-  'scroll': ['Scroll held flat in smooth jaws, rolled a little at a time', k.rope(path(spiral(250, 220, 1.7, 0.4, 1, 26)) + 'Q330 330 420 350L640 390', 26), p.at(256, 214, 0, k.flatOver()), p.arrow('M330 120A120 120 0 0 1 376 230', [376, 236], 92)],
+  'scroll': ['Scroll held flat in smooth jaws, rolled a little at a time', k.rope(path(spiral(250, 220, 1.7, 0.4, 1, 26)) + 'L232 424', 26), p.at(256, 214, 0, k.flatOver()), p.arrow('M384 190A124 124 0 0 0 280 92', [274, 91], 188)],
   'lay': ['Thumb bending the leg at the cap, the scroll seen edge on coming down to the bead', k.ghost(`M${n(200 + stands(3.25) * 20)} 210V70`, 3), profile(200, 290, 20), p.at(392, 214, -8, p.finger(230)), p.arrow('M330 90A150 150 0 0 0 272 108', [262, 112], 160)],
   'paper': ['Slip of paper drawn between scroll and bead', k.closed(work(200, 290, 1, 20), 3), p.bead(200, 290, R * 20), slip, edge(200, 290, 20, 0.95), capSide(200, 290, 1, 20), p.arrow('M150 60L100 28', [96, 26], 214)],
   'lay-out': ['Scrolled links and the beads between them in the groove of a board', p.steel('M20 120H640V320H20Z', '#d9b98c'), p.steel('M20 178H640V262H20Z', '#c6a573'), linkScrolled(150, 220, 6.6), p.bead(330, 220, 50), linkScrolled(510, 220, 6.6)],
