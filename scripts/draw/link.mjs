@@ -29,6 +29,12 @@ const acrossTail = (f, a, b, away, long = 60) => {
 /** Bent jaws that press the end at `a` to the neck, above and below the turns. */
 const press = (f, a, away) => k.pliers([k.flatJaw(...k.place(f, a, 2), 1.1 * f.w, 44, 1), k.flatJaw(...k.place(f, a, -1.5), 1.1 * f.w, 44, -1)], away)
 
+/** Open loop with the closed loop of a neighbour in it: over at one crossing, under at the other. */
+const hung = (f) => {
+  const [x, y] = k.place(f, k.ROUND + 2.9, 0)
+  return [k.closed(f, f.dir < 0 ? 18 : 3.6, 7), k.rope(`M${x + 53} ${y}A53 53 0 1 1 ${x - 53} ${y}A53 53 0 1 1 ${x + 53} ${y}`), k.rope(k.arcOf(f, 105, 150), W, 'butt')]
+}
+
 const big = k.work(225, 230, -1, 34)
 const close = k.work(235, 260, -1, 30)
 const closeSecond = k.work(400, 260, 1, 30)
@@ -47,6 +53,15 @@ export const LINK = {
   'turn': ['Jaw in the bend, the wire rolled over it', ...between(inLoop(first, [-1.8, 1.8], [110, 170]), k.rolled(first, 18, 205, 5)), p.arrow('M232 110A120 120 0 0 0 96 168', [92, 176], 112)],
   'circle': ['Jaw moved to the other side, wire crossing in front of the neck', ...between(inLoop(first, [3.9, 4.1], [-40, 190]), k.closed(first, 18, 7)), p.look(264, 240, 50)],
   'centre': ['The line of the wire through the middle of the loop', p.at(190, 240, 0, ''), k.closed(first, 18, 6), p.at(190, 240, 0, k.flatOver()), k.ghost('M262 240L600 318'), p.arrow('M500 350Q520 310 514 262', [513, 258], -94), k.sight('M150 240H640')],
+  'across': ['Calliper across the loop, the second place at right angles', ...(() => {
+    const f = k.work(400, 220, -1, 30)
+    const [x, y] = k.place(f, k.ROUND, 0)
+    const reach = (k.ROUND + 0.5) * 30
+    const jaws = [-1, 1].map(side => p.steel(`M${side * reach} -16L${side * (reach + 26)} 6V560H${side * reach}Z`))
+    return [k.closed(f, 12, 5), p.at(x, y, 45, k.ghost(`M0 ${-reach - 40}V${reach + 40}`), ...jaws)]
+  })()],
+  'hang': ['Neighbour hanging in the open loop', ...hung(first)],
+  'hang-second': ['Neighbour hanging in the open loop of the second end', ...hung(second), beadAfter(second)],
   'trim': ['Cutter across the tail, flat side down on the last turn', ...(() => {
     const tool = acrossTail(close, -2.89, 1.75, [150, -190], 60)
     return [k.closed(close, 16), tool.back, k.wound(close, k.PLACES, 6), tool.front]

@@ -29,6 +29,8 @@ const along = (f, from, to) => {
     return place(f, ROUND - ROUND * Math.cos(at), ROUND * Math.sin(at))
   })
 }
+/** A stretch of the loop, to be drawn again over what passes behind it. */
+export const arcOf = (f, from, to) => path(along(f, from, to))
 /** Neck, square bend and the loop rolled so far; `tail` is the straight end left, in wires. */
 export const rolled = (f, neck, degrees, tail) => {
   const at = degrees * Math.PI / 180

@@ -15,11 +15,12 @@ export function usualScope(lesson: Lesson): Scope {
   return { ...sizesScope(lesson, sizes), ...workOut(lesson, sizes).figures }
 }
 
-/** The drawing that stands for a lesson in a list: its first that is no strip, else its first that can be drawn, else null. */
+/** The drawing that stands for a lesson in a list: its first loop, else its first that is no strip, else its first that can be drawn, else null. */
 export function signDrawing(lesson: Lesson): Drawn | null {
   const scope = usualScope(lesson)
   const drawings = lesson.parts.flatMap(part => part.steps).flatMap(step => step.drawings)
-  const inOrder = [...drawings.filter(drawing => drawing.kind !== 'strip'), ...drawings.filter(drawing => drawing.kind === 'strip')]
+  const rank = (kind: string): number => kind === 'loop' ? 0 : kind === 'strip' ? 2 : 1
+  const inOrder = [...drawings].sort((a, b) => rank(a.kind) - rank(b.kind))
   for (const drawing of inOrder) {
     const made = drawn(drawing, scope, 'mm', false)
     if (made) return made
