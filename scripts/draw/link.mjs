@@ -64,11 +64,11 @@ export const LINK = {
   'hang-second': ['Neighbour hanging in the open loop of the second end', ...hung(second), beadAfter(second)],
   'trim': ['Cutter across the tail, flat side down on the last turn', ...(() => {
     const tool = acrossTail(close, -2.89, 1.75, [150, -190], 60)
-    return [k.closed(close, 16), tool.back, k.wound(close, k.PLACES, 6), tool.front]
+    return [tool.back, k.closed(close, 16), k.wound(close, k.PLACES, 6), tool.front]
   })(), p.look(close.x + 2.89 * 30, 214, 34)],
   'press': ['Bent jaws press the wire end down to the neck', ...(() => {
     const tool = press(close, -2.95, [170, 190])
-    return [k.closed(close, 16), tool.back, k.wound(close, k.PLACES, 1.5), tool.front]
+    return [tool.back, k.closed(close, 16), k.wound(close, k.PLACES, 1.5), tool.front]
   })(), p.arrow('M324 40V128', [324, 134], 90)],
   'thread': ['Bead slid down to the turns', firstEnd(170, 240, 24), p.bead(430, 240, BEAD * W), p.arrow('M520 80H400', [394, 80], 180)],
   'bend-second': ['Jaws between the bead and the bend', ...between(onNeck(second, [60, 190]), k.bent(second, 3.6, 8), beadAfter(second)), p.at(440, 150, 0, p.finger(240))],
@@ -80,11 +80,11 @@ export const LINK = {
   'wrap-second': ['Loop held flat, turns filling the neck, the last at the bead', k.closed(second, 3.6), beadAfter(second), k.wound(second, k.PLACES, 7), p.at(450, 240, 0, '<g transform="scale(-1 1)">', k.flatOver(), '</g>'), p.look(330, 240, 36)],
   'trim-second': ['Cutter across the tail, flat side down on the last turn, clear of the bead', ...(() => {
     const tool = acrossTail(closeSecond, -2.89, 1.75, [150, -190], 22)
-    return [k.closed(closeSecond, 3.6), beadAfter(closeSecond), tool.back, k.wound(closeSecond, k.PLACES, 6), tool.front]
+    return [tool.back, k.closed(closeSecond, 3.6), beadAfter(closeSecond), k.wound(closeSecond, k.PLACES, 6), tool.front]
   })(), p.look(400 - 2.89 * 30, 214, 34)],
   'press-second': ['Bent jaws press the second end in, clear of the bead', ...(() => {
     const tool = press(closeSecond, -2.75, [170, 190])
-    return [k.closed(closeSecond, 3.6), beadAfter(closeSecond), tool.back, k.wound(closeSecond, k.PLACES, 1.5), tool.front]
+    return [tool.back, k.closed(closeSecond, 3.6), beadAfter(closeSecond), k.wound(closeSecond, k.PLACES, 1.5), tool.front]
   })(), p.arrow('M317 40V128', [317, 134], 90)],
   'turns-yes': ['Two and a half turns, closed up, from loop to bead', k.closed(big, 3.4), p.bead(225 + (3.28 + BEAD) * 34, 230, BEAD * 34), k.wound(big, k.PLACES)],
   'turns-nearly': ['A gap between two turns', k.closed(big, 4.2), p.bead(225 + (4.05 + BEAD) * 34, 230, BEAD * 34), k.wound(big, [1.87, 3.5]), p.look(225 + 2.72 * 34, 230, 34)],
