@@ -79,7 +79,7 @@ export const LINK = {
   'centre-second': ['The line of the wire through the middle of the second loop', k.closed(second, 3.6, 7), beadAfter(second), p.at(450, 240, 0, '<g transform="scale(-1 1)">', k.flatOver(), '</g>'), k.sight('M20 240H600')],
   'wrap-second': ['Loop held flat, turns filling the neck, the last at the bead', k.closed(second, 3.6), beadAfter(second), k.wound(second, k.PLACES, 7), p.at(450, 240, 0, '<g transform="scale(-1 1)">', k.flatOver(), '</g>'), p.look(330, 240, 36)],
   'trim-second': ['Cutter across the tail, flat side down on the last turn, clear of the bead', ...(() => {
-    const tool = acrossTail(closeSecond, -2.89, 1.75, [150, -190], 22)
+    const tool = acrossTail(closeSecond, -2.89, 1.75, [150, -190], 17)
     return [tool.back, k.closed(closeSecond, 3.6), beadAfter(closeSecond), k.wound(closeSecond, k.PLACES, 6), tool.front]
   })(), p.look(400 - 2.89 * 30, 214, 34)],
   'press-second': ['Bent jaws press the second end in, clear of the bead', ...(() => {
