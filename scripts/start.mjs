@@ -1,10 +1,11 @@
 /** `npm start`: from nothing to a running studio. Until the packages are installed only Node's own modules are used. */
+import { existsSync, rmSync } from 'node:fs'
 import { foldersOf } from './lib/folders.mjs'
 import { placeOf } from './lib/host.mjs'
 import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
 import { startMariadb } from './lib/mariadb.mjs'
-import { endLeftOver, noteChild, takeLock } from './lib/one-at-a-time.mjs'
-import { isTaken, until } from './lib/run.mjs'
+import { endLeftOver, noteChild, takeFolder } from './lib/locks.mjs'
+import { endAll, until, whyNot } from './lib/run.mjs'
 import { say, Trouble, trouble } from './lib/say.mjs'
 import { secretsOf } from './lib/secrets.mjs'
 import { build, startCatcher, startServer, step } from './lib/services.mjs'
@@ -16,6 +17,7 @@ let stopping = null
 function stopAll() {
   stopping ??= (async () => {
     for (const stop of stops.splice(0).reverse()) await stop()
+    await endAll()
   })()
   return stopping
 }
@@ -25,20 +27,25 @@ async function main() {
   const place = placeOf(process.env)
   // Another folder than .data, for measuring beside a running studio.
   const folders = foldersOf(process.env.THIRDHAND_DATA ?? '.data')
-  const release = takeLock(folders)
-  stops.push(release)
+  stops.push(await takeFolder(folders))
   await endLeftOver(folders, until)
-  if (await isTaken(place.port, place.listen)) trouble(`Port ${place.port} is taken by another program. Stop it, or choose another: PORT=${place.port + 1} npm start`)
+  await checkPort(place)
   await installPrograms(['mariadb-server-core'])
   await installPackages()
   const secrets = secretsOf(folders)
   const database = await startMariadb(folders, secrets)
   stops.push(() => database.stop())
+  if (existsSync(folders.loading)) {
+    say('The demo was not loaded to its end last time. It is made anew.')
+    await database.clear()
+    rmSync(folders.files, { recursive: true, force: true })
+    rmSync(folders.loading)
+  }
   await step('scripts/migrate.ts', [], { OWNER_DATABASE_URL: database.owner })
   const mail = await mailOf(place, folders)
   if (place.isLocal) {
     await database.patience(false)
-    await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files })
+    await step('scripts/seed.ts', ['--if-empty'], { NUXT_DATABASE_URL: database.app, NUXT_FILES_DIR: folders.files, SEED_LOADING: folders.loading })
     await database.patience(true)
   }
   else if ((await step('scripts/has-demo.ts', [], { NUXT_DATABASE_URL: database.app }, true)).trim() !== 'no') {
@@ -54,6 +61,14 @@ async function main() {
   server.onExit(() => end(stopping ? 0 : 1))
   database.onExit(() => { if (!stopping) { say('The database ended by itself. Start again: it recovers.'); end(1) } })
   await welcome(place)
+}
+
+/** Listening is tried before anything is made. */
+async function checkPort({ port, listen }) {
+  const why = await whyNot(port, listen)
+  if (why === 'EACCES') trouble(`Port ${port} is for the administrator: those under 1024 are. Take another, PORT=3000 npm start, and let a proxy listen there.`)
+  if (why === 'EADDRNOTAVAIL' || why === 'ENOTFOUND') trouble(`HOST ${listen} is no address of this machine.`)
+  if (why) trouble(`Port ${port} is taken by another program. Stop it, or choose another: PORT=${port + 1} npm start`)
 }
 
 /** On loopback without a mail server of one's own, letters go to the catcher, to be read at /mail. */
@@ -79,6 +94,7 @@ async function end(code) {
 
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => end(0))
 main().catch(async (error) => {
-  say(error instanceof Trouble ? error.message : `Something went wrong: ${error.stack ?? error}`)
+  // What was stopped on the way did not fail.
+  if (!stopping) say(error instanceof Trouble ? error.message : `Something went wrong: ${error.stack ?? error}`)
   await end(1)
 })

@@ -1,11 +1,12 @@
 /** `npm test`: everything from nothing, beside a running `npm start`. `--only api|e2e` runs that stage alone; `--long` the whole of what is drawn. */
-import { cpSync, existsSync, mkdirSync, readdirSync, readFileSync, rmSync, statSync } from 'node:fs'
+import { cpSync, existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
+import { counted } from './lib/counted.mjs'
 import { foldersOf, ROOT } from './lib/folders.mjs'
 import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
 import { startMariadb } from './lib/mariadb.mjs'
-import { endLeftOver, takeLock } from './lib/one-at-a-time.mjs'
-import { freePort, run, until } from './lib/run.mjs'
+import { endLeftOver, noteChild, takeFolder, withLock } from './lib/locks.mjs'
+import { endAll, freePort, run, until } from './lib/run.mjs'
 import { say, Trouble } from './lib/say.mjs'
 import { secretsOf } from './lib/secrets.mjs'
 import { build, startCatcher, startServer, step } from './lib/services.mjs'
@@ -40,32 +41,24 @@ async function stage(name, work) {
 const one = code => code === 0 ? { passed: 1, failed: 0 } : { passed: 0, failed: 1 }
 const command = (line, args, more = {}) => async () => one((await run(line, args, { env: { ...env, ...more } })).code)
 
-function hasTests(folder) {
-  const path = join(ROOT, folder)
-  return existsSync(path) && readdirSync(path, { recursive: true }).some(name => /\.(test|spec)\.ts$/.test(name) && statSync(join(path, name)).isFile())
-}
-
 /** Runs one project of the unit runner and counts by its own report. */
 function vitest(project, more = {}) {
   return async () => {
-    if (!hasTests(`tests/${project}`)) return { passed: 0, failed: 0 }
     const file = join(reports, `${project}.json`)
     const { code } = await run('npx', ['vitest', 'run', '--project', project, '--reporter=default', '--reporter=json', `--outputFile.json=${file}`], { env: { ...env, ...more } })
     if (!existsSync(file)) return { passed: 0, failed: 1 }
     const report = JSON.parse(readFileSync(file, 'utf8'))
     const failed = report.numFailedTests + report.testResults.filter(result => result.status === 'failed' && result.assertionResults.length === 0).length
-    return { passed: report.numPassedTests, failed: code !== 0 && failed === 0 ? 1 : failed }
+    return counted({ passed: report.numPassedTests, failed, left: report.numPendingTests + report.numTodoTests }, code)
   }
 }
 
 async function playwright(more) {
-  if (!hasTests('tests/e2e')) return { passed: 0, failed: 0 }
   const file = join(reports, 'e2e.json')
   const { code } = await run('npx', ['playwright', 'test', '--reporter=list,json'], { env: { ...env, ...more, PLAYWRIGHT_JSON_OUTPUT_FILE: file } })
   if (!existsSync(file)) return { passed: 0, failed: 1 }
   const { stats } = JSON.parse(readFileSync(file, 'utf8'))
-  const failed = stats.unexpected + stats.skipped
-  return { passed: stats.expected + stats.flaky, failed: code !== 0 && failed === 0 ? 1 : failed }
+  return counted({ passed: stats.expected, failed: stats.unexpected + stats.flaky, left: stats.skipped }, code)
 }
 
 const seeded = { mysql: join(folders.data, 'seeded-mysql'), files: join(folders.data, 'seeded-files') }
@@ -97,12 +90,14 @@ async function withStudio(work) {
   stops.push(() => database.stop())
   const port = await freePort()
   const catcher = await startCatcher(folders.mail)
+  noteChild(folders, 'catcher.pid', catcher.pid)
   stops.push(() => catcher.stop())
   const url = `http://localhost:${port}`
   const server = await startServer(OUTPUT, {
     NUXT_DATABASE_URL: database.app, NUXT_SESSION_PASSWORD: secrets.session, NUXT_SMTP_URL: catcher.smtpUrl, NUXT_CATCHER_URL: catcher.url, NUXT_PUBLIC_URL: url, NUXT_FILES_DIR: files, NUXT_SCRYPT_LOG2: '12', NUXT_TEST_CLOCK: '1',
     NITRO_PORT: String(port), NITRO_HOST: '127.0.0.1', PORT: String(port), HOST: '127.0.0.1', NUXT_SESSION_COOKIE_SECURE: 'false',
   }, `http://127.0.0.1:${port}/api/ready`)
+  noteChild(folders, 'server.pid', server.pid)
   stops.push(() => server.stop())
   try {
     return await work({ TEST_BASE_URL: url, TEST_DATABASE_URL: database.app, TEST_OWNER_URL: database.owner, TEST_CATCHER_URL: catcher.url, TEST_FILES_DIR: files })
@@ -116,7 +111,7 @@ async function withStudio(work) {
 
 async function main() {
   checkNode()
-  stops.push(takeLock(folders))
+  stops.push(await takeFolder(folders))
   await installPrograms(['mariadb-server-core', 'chromium'])
   await installPackages()
   await endLeftOver(folders, until)
@@ -124,7 +119,7 @@ async function main() {
   mkdirSync(reports, { recursive: true })
   // Types for the editor's tsconfig live in .nuxt; a running `npm start` is not touched by making them.
   await stage('lint', command('npx', ['eslint', '.', '--max-warnings', '0']))
-  await stage('typecheck', command('npx', ['nuxt', 'typecheck']))
+  await stage('typecheck', () => withLock(ROOT, 'build .output', command('npx', ['nuxt', 'typecheck'])))
   await stage('unit', vitest('unit'))
   await stage('checks', vitest('checks'))
   await stage('nuxt', vitest('nuxt', { THIRDHAND_BUILD_DIR: '.nuxt-vitest' }))
@@ -136,6 +131,7 @@ async function main() {
 
 async function end(code) {
   for (const stop of stops.splice(0).reverse()) await Promise.resolve(stop()).catch(error => say(String(error)))
+  await endAll()
   process.exit(code)
 }
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => end(1))

@@ -1,10 +1,10 @@
 import { fileURLToPath } from 'node:url'
-import { join } from 'node:path'
+import { join, resolve } from 'node:path'
 
 export const ROOT = fileURLToPath(new URL('../..', import.meta.url)).replace(/\/$/, '')
 
-/** Where one installation keeps what it has: the database, its secrets, mail, photos, and the pid of who runs it. */
+/** Where one installation keeps what it has: the database, its secrets, mail, photos, the pid of who runs it, and the mark of a demo half loaded. */
 export function foldersOf(name = '.data') {
-  const data = join(ROOT, name)
-  return { data, mysql: join(data, 'mysql'), secrets: join(data, 'secrets.json'), mail: join(data, 'mail'), files: join(data, 'files'), lock: join(data, 'running.pid'), socket: join(data, 'mysql.sock'), log: join(data, 'mysql.log') }
+  const data = resolve(ROOT, name)
+  return { data, mysql: join(data, 'mysql'), secrets: join(data, 'secrets.json'), mail: join(data, 'mail'), files: join(data, 'files'), lock: join(data, 'running.pid'), socket: join(data, 'mysql.sock'), log: join(data, 'mysql.log'), loading: join(data, 'demo-loading') }
 }

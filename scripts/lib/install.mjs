@@ -2,6 +2,7 @@ import { createHash } from 'node:crypto'
 import { existsSync, readFileSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { ROOT } from './folders.mjs'
+import { withLock } from './locks.mjs'
 import { run } from './run.mjs'
 import { say, trouble } from './say.mjs'
 
@@ -17,7 +18,9 @@ export function checkNode(version = process.versions.node) {
 export const lockHash = (root = ROOT) => createHash('sha256').update(readFileSync(join(root, 'package-lock.json'))).digest('hex')
 
 /** Installs the packages when the lock file is not the one they were installed from. */
-export async function installPackages() {
+export const installPackages = () => withLock(ROOT, 'packages', installNow)
+
+async function installNow() {
   const wanted = lockHash()
   if (existsSync(MARK) && readFileSync(MARK, 'utf8') === wanted) return
   say('Installing the packages of package-lock.json ...')

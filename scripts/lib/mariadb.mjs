@@ -1,11 +1,13 @@
-import { spawn } from 'node:child_process'
 import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
 import { mariadbd } from './install.mjs'
-import { freePort, run, until } from './run.mjs'
+import { noteChild } from './locks.mjs'
+import { end, freePort, run, start, until } from './run.mjs'
+import { trouble } from './say.mjs'
 
 const SYSTEM = '/usr/share/mysql'
 const DATABASE = 'thirdhand'
+const MAKE_DATABASE = `CREATE DATABASE IF NOT EXISTS ${DATABASE} CHARACTER SET utf8mb4 COLLATE utf8mb4_unicode_ci`
 
 // Debian's mariadb-server-core has no my_print_defaults, which mariadb-install-db wants; so the system tables go in by hand.
 async function makeSystemTables(folders) {
@@ -15,7 +17,7 @@ async function makeSystemTables(folders) {
   const { code, out } = await run(mariadbd(), ['--no-defaults', ...asRoot(), `--datadir=${folders.mysql}`, '--bootstrap', '--log-warnings=0'], { input: sql, keep: true })
   if (code !== 0) {
     rmSync(folders.mysql, { recursive: true, force: true })
-    throw new Error(`The database could not be made: ${out.trim().split('\n').slice(-3).join(' ')}`)
+    trouble(`The database could not be made: ${out.trim().split('\n').slice(-3).join(' ')}`)
   }
 }
 
@@ -30,9 +32,10 @@ export async function startMariadb(folders, secrets, { hurry = false } = {}) {
   const isNew = !existsSync(join(folders.mysql, 'ibdata1'))
   if (isNew) await makeSystemTables(folders)
   const port = await freePort()
-  const child = spawn(mariadbd(), ['--no-defaults', ...asRoot(), `--datadir=${folders.mysql}`, `--socket=${folders.socket}`, `--port=${port}`, '--bind-address=127.0.0.1', '--skip-name-resolve',
+  const child = start(mariadbd(), ['--no-defaults', ...asRoot(), `--datadir=${folders.mysql}`, `--socket=${folders.socket}`, `--port=${port}`, '--bind-address=127.0.0.1', '--skip-name-resolve',
     `--pid-file=${join(folders.data, 'mysql.pid')}`, `--log-error=${folders.log}`, `--innodb-flush-log-at-trx-commit=${hurry ? 0 : 1}`, '--character-set-server=utf8mb4', '--collation-server=utf8mb4_unicode_ci', '--default-time-zone=+00:00',
-    '--max-connections=60', '--innodb-buffer-pool-size=256M', '--local-infile=0', '--log-warnings=1'], { stdio: 'ignore', detached: true })
+    '--max-connections=60', '--innodb-buffer-pool-size=256M', '--local-infile=0', '--log-warnings=1'], { stdio: 'ignore' })
+  noteChild(folders, 'database.pid', child.pid)
   let ended = false
   child.on('exit', () => { ended = true })
   const mysql = await import('mysql2/promise')
@@ -48,7 +51,7 @@ export async function startMariadb(folders, secrets, { hurry = false } = {}) {
   }
   let root = null
   await until(async () => {
-    if (ended) throw new Error(`The database did not start. Its own words are in ${folders.log}.`)
+    if (ended) trouble(`The database did not start. Its own words are in ${folders.log}.`)
     root = await connect()
     return root !== null
   }, 60, `The database did not answer. Its own words are in ${folders.log}.`)
@@ -58,11 +61,12 @@ export async function startMariadb(folders, secrets, { hurry = false } = {}) {
     port, isNew, owner: url('owner', secrets.owner), app: url('app', secrets.app), pid: child.pid,
     /** Whether a commit waits for the disk (1, the rule) or not (0, while the demo is made). */
     async patience(value) { await root.query(`SET GLOBAL innodb_flush_log_at_trx_commit = ${value ? 1 : 0}`) },
+    /** Throws all that is in it away. */
+    async clear() { await root.query(`DROP DATABASE ${DATABASE}; ${MAKE_DATABASE}`) },
     async stop() {
       if (ended) return
       await root.end().catch(() => undefined)
-      child.kill('SIGTERM')
-      await until(() => ended, 60, 'The database did not stop.')
+      await end(child, 60)
     },
     onExit(then) { child.on('exit', then) },
   }
@@ -70,8 +74,8 @@ export async function startMariadb(folders, secrets, { hurry = false } = {}) {
 
 /** Root with its password; the owner who migrates; the application, whose rights come table by table after each migration. */
 async function accounts(root, secrets) {
-  await root.query(`CREATE DATABASE IF NOT EXISTS ${DATABASE} CHARACTER SET utf8mb4 COLLATE utf8mb4_unicode_ci`)
-  for (const host of ['localhost']) await root.query(`CREATE USER IF NOT EXISTS root@'${host}'; ALTER USER root@'${host}' IDENTIFIED BY ?`, [secrets.root]).catch(() => undefined)
+  await root.query(MAKE_DATABASE)
+  await root.query('ALTER USER root@localhost IDENTIFIED BY ?', [secrets.root])
   for (const user of ['owner', 'app']) await root.query(`CREATE USER IF NOT EXISTS ${user}@'127.0.0.1' IDENTIFIED BY ?; ALTER USER ${user}@'127.0.0.1' IDENTIFIED BY ?`, [secrets[user], secrets[user]])
   await root.query(`GRANT ALL PRIVILEGES ON ${DATABASE}.* TO owner@'127.0.0.1' WITH GRANT OPTION`)
   await root.query(`DROP USER IF EXISTS root@'127.0.0.1', root@'::1', ''@'localhost'`)

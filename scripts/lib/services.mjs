@@ -1,23 +1,21 @@
-import { spawn } from 'node:child_process'
 import { createHash } from 'node:crypto'
 import { existsSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { ROOT } from './folders.mjs'
-import { run, until } from './run.mjs'
+import { withLock } from './locks.mjs'
+import { answers, end, run, start, until } from './run.mjs'
 import { say, trouble } from './say.mjs'
 
-export const TSX = ['tsx', '--tsconfig', 'scripts/tsconfig.json']
-
-/** Runs a TypeScript step of scripts/ to its end. */
+/** Runs a TypeScript step of scripts/ to its end, in one process that a signal ends. */
 export async function step(script, args = [], env = {}, keep = false) {
-  const { code, out } = await run('npx', [...TSX, script, ...args], { env, keep })
+  const { code, out } = await run(process.execPath, ['--import', 'tsx', script, ...args], { env: { ...env, TSX_TSCONFIG_PATH: 'scripts/tsconfig.json' }, keep })
   if (code !== 0) trouble(`${script} did not work.${keep ? `\n${out}` : ''}`)
   return out
 }
 
 /** Starts the mail catcher and waits for its ports. */
 export async function startCatcher(folder) {
-  const child = spawn(process.execPath, ['--import', 'tsx', 'scripts/catcher.ts'], { cwd: ROOT, env: { ...process.env, CATCHER_FOLDER: folder }, stdio: ['ignore', 'pipe', 'inherit'], detached: true })
+  const child = start(process.execPath, ['--import', 'tsx', 'scripts/catcher.ts'], { cwd: ROOT, env: { ...process.env, CATCHER_FOLDER: folder }, stdio: ['ignore', 'pipe', 'inherit'] })
   let told = ''
   child.stdout.on('data', (chunk) => { told += chunk })
   await until(() => told.includes('\n'), 20, 'The mail catcher did not start.')
@@ -27,24 +25,14 @@ export async function startCatcher(folder) {
 
 /** Starts the built application and waits until it answers. */
 export async function startServer(output, env, url) {
-  const child = spawn(process.execPath, [join(ROOT, output, 'server', 'index.mjs')], { cwd: ROOT, env: { ...process.env, NODE_ENV: 'production', ...env }, stdio: ['ignore', 'inherit', 'inherit'], detached: true })
+  const child = start(process.execPath, [join(ROOT, output, 'server', 'index.mjs')], { cwd: ROOT, env: { ...process.env, NODE_ENV: 'production', ...env }, stdio: ['ignore', 'inherit', 'inherit'] })
   let ended = null
   child.on('exit', (code) => { ended = code ?? 1 })
   await until(async () => {
     if (ended !== null) trouble('The application ended at once. What it said stands above.')
-    return await fetch(url, { redirect: 'manual' }).then(() => true, () => false)
+    return await answers(url)
   }, 60, 'The application did not answer.')
   return { pid: child.pid, stop: () => end(child), onExit: then => child.on('exit', then) }
-}
-
-/** Asks a process to end and waits; what does not end in ten seconds is ended. */
-function end(child) {
-  if (child.exitCode !== null || child.signalCode !== null) return Promise.resolve()
-  return new Promise((resolve) => {
-    const timer = setTimeout(() => child.kill('SIGKILL'), 10_000)
-    child.on('exit', () => { clearTimeout(timer); resolve() })
-    child.kill('SIGTERM')
-  })
 }
 
 const SOURCES = ['app', 'server', 'shared', 'public', 'nuxt.config.ts', 'tailwind.config.ts', 'package-lock.json']
@@ -62,7 +50,9 @@ export function sourceHash(root = ROOT, sources = SOURCES) {
 }
 
 /** Builds into a folder of its own when the sources are not those of the last build there. True when it built. */
-export async function build(output, buildDir, keep = true) {
+export const build = (output, buildDir, keep = true) => withLock(ROOT, `build ${output}`, () => buildNow(output, buildDir, keep))
+
+async function buildNow(output, buildDir, keep) {
   const mark = join(ROOT, output, '.sources')
   const wanted = sourceHash()
   if (existsSync(mark) && readFileSync(mark, 'utf8') === wanted) return false
