@@ -1,5 +1,5 @@
 /** The list of turns of one piece: fixed by the lesson and by what was told before the piece began. */
-import type { Ask, Hold, Lesson, Node, Part, Step } from '../lesson/schema'
+import type { Ask, Lesson, Node, Part, Step } from '../lesson/schema'
 import { countOf, isTrue, type Scope } from '../lesson/figures'
 import { shaOf } from '../lesson/canonical'
 import type { PieceStarted } from './events'
@@ -96,20 +96,18 @@ function addressOf(step: Step, part: Part, partTurn: number, stepTurn: number): 
 function asksOf(step: Step, scope: Scope, start: PieceStarted, seen: Set<string>): Pick<Turn, 'asks' | 'witness'> {
   const asks: PlannedAsk[] = []
   let witness = false
+  // A hold of the stick or the class evening is asked once: not again in this piece, and not if it was passed before.
+  const isPast = seen.has(step.key) || start.once.passed.includes(step.key)
   step.holds.forEach((hold, h) => {
-    if (!holds(hold.when, scope) || askedBefore(hold, step, start, seen)) return
+    if (!holds(hold.when, scope)) return
+    if (hold.once !== 'piece') {
+      if (isPast) return
+      seen.add(step.key)
+    }
     hold.asks.forEach((_: Ask, a) => asks.push({ hold: h, ask: a }))
     witness ||= hold.witness === 'always' || (hold.witness === 'below 3' && start.level < 3) || (hold.witness === 'below 4' && start.level < 4)
   })
   return { asks, witness }
-}
-
-/** A hold of the stick or the class evening is asked once: not again in this piece, and not if it was passed before. */
-function askedBefore(hold: Hold, step: Step, start: PieceStarted, seen: Set<string>): boolean {
-  if (hold.once === 'piece') return false
-  if (seen.has(step.key) || start.once.passed.includes(step.key)) return true
-  seen.add(step.key)
-  return false
 }
 
 const holds = (when: Node | null, scope: Scope): boolean => when === null || isTrue(when, scope)

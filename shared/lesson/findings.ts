@@ -6,11 +6,11 @@ export const CODES = {
   // the file
   'too-long': 'error', 'front-matter-missing': 'error', 'yaml': 'error', 'yaml-anchor': 'error', 'yaml-key': 'error', 'front-value': 'error', 'front-missing': 'error', 'flow-comma': 'error',
   // lines
-  'unknown-keyword': 'error', 'keyword-colon': 'error', 'keyword-inside': 'error', 'indent-lost': 'error', 'unknown-field': 'error', 'field-value': 'error', 'deep-heading': 'error', 'raw-html': 'error',
+  'unknown-keyword': 'error', 'keyword-colon': 'error', 'keyword-inside': 'error', 'indent-lost': 'error', 'unknown-field': 'error', 'field-value': 'error', 'deep-heading': 'error', 'underlined-heading': 'error', 'indented-code': 'error', 'raw-html': 'error',
   'step-missing': 'error', 'tab': 'advice', 'heading-space': 'advice',
   // names and figures
   'bad-name': 'error', 'duplicate-name': 'error', 'unknown-name': 'error', 'unknown-function': 'error', 'function-not-yet': 'error', 'expression': 'error', 'wrong-kind': 'error', 'figure-fails': 'error',
-  'unknown-reading': 'error', 'unknown-figure': 'error', 'unknown-choice': 'error', 'usual-outside': 'error', 'repeat-not-count': 'error',
+  'unknown-reading': 'error', 'unknown-figure': 'error', 'unknown-choice': 'error', 'usual-outside': 'error', 'repeat-not-count': 'error', 'repeat-range': 'error',
   // steps
   'duplicate-key': 'error', 'hold-no-consequence': 'error', 'hold-cannot-fail': 'error', 'hold-not-first': 'error', 'hold-after-deed': 'error', 'holds-without-when': 'error', 'hold-no-wrong': 'error',
   'choice-no-fault': 'error', 'choice-right-fault': 'error', 'choice-none-right': 'error', 'choice-count': 'error', 'fault-incomplete': 'error', 'torch-missing': 'error', 'permission-not-said': 'error',

@@ -56,10 +56,22 @@ export function scan(source: string, from: number, findings: Findings): Item[] {
     const heading = /^(#{1,6})(?:[ \t]+(.*?))?(?:[ \t]+#*)?$/.exec(line.text)
     if (heading?.[1] && (heading[2] !== undefined || line.text === heading[1])) { i = headingAt(lines, i, heading[1].length, heading[2] ?? '', items, findings); continue }
     if (/^#{1,6}[^\s#]/.test(line.text)) findings.add('heading-space', line, 'A heading has a space after its #.', { from: line.from, to: line.to, text: line.text.replace(/^(#+)/, '$1 '), says: 'Put a space in' })
+    notUsed(lines, i, items, findings)
     const keyword = keywordOf(line, lines[i + 1], findings)
     i = keyword ? blockAt(lines, i, keyword, items, findings) : addText(items, line, i)
   }
   return items
+}
+
+/** What CommonMark knows and a lesson does not: headings by a line beneath, code by four spaces. It is read as text. */
+function notUsed(lines: readonly Line[], i: number, items: readonly Item[], findings: Findings): void {
+  const [line, before] = [lines[i], lines[i - 1]]
+  const last = items[items.length - 1]
+  if (!line || !before || last?.t !== 'text') return
+  const isUnderText = !blank(before) && last.lines[last.lines.length - 1]?.from === before.from
+  if (isUnderText && /^ {0,3}(=+|-{2,})[ \t]*$/.test(line.text)) findings.add('underlined-heading', line, 'A heading is not made by a line beneath it. Write # or ## before its words.')
+  const inList = last.lines.some(({ text }) => /^ *(?:[-*+]|\d+[.)])[ \t]/.test(text))
+  if (blank(before) && !inList && /^ {4,}\S/.test(line.text)) findings.add('indented-code', { from: line.from + line.text.search(/\S/), to: line.to }, 'Four spaces make no code here. Take them away, or put ``` before and after.')
 }
 
 function addText(items: Item[], line: Line, i: number): number {

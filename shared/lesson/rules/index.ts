@@ -1,6 +1,7 @@
 import type { Rule } from './context'
 import { choiceWords } from './choice-words'
 import { corners } from './corners'
+import { repeats } from './repeats'
 import { expressions } from './expressions'
 import { history } from './history'
 import { holds } from './holds'
@@ -13,4 +14,4 @@ import { safety } from './safety'
 import { teaching } from './teaching'
 
 /** In the order they run: names first, as the others ask for kinds. */
-export const RULES: readonly Rule[] = [names, corners, expressions, choiceWords, references, holds, pictures, permissions, safety, prose, teaching, history]
+export const RULES: readonly Rule[] = [names, corners, expressions, repeats, choiceWords, references, holds, pictures, permissions, safety, prose, teaching, history]
