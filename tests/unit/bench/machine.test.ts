@@ -49,6 +49,12 @@ describe('the plan', () => {
     expect(addresses(1)).toEqual(['cut'])
   })
 
+  it('asks two holds of the stick of one step in the same turn, and neither again', () => {
+    const of = lesson([part('links', [step('prove', { holds: [hold([choices], { once: 'stick' }), hold([choices], { once: 'stick' })] })], { repeat: num(2) })])
+    const planned = plan(of, start(of))
+    expect(planned.ok && planned.turns.map(turn => turn.asks.map(ask => ask.hold))).toEqual([[0, 1], []])
+  })
+
   it('asks a hold of the stick once in a piece, and not at all when it was passed before', () => {
     const of = lesson([part('links', [step('prove', { holds: [hold([choices], { once: 'stick' })] })], { repeat: num(3) })])
     const asked = (passed: string[]) => { const planned = plan(of, start(of, { once: { passed, samples: {} } })); return planned.ok ? planned.turns.map(turn => turn.asks.length) : [] }
