@@ -13,24 +13,25 @@ import { authorOf } from '#server/services/import-author'
 import { lessonFolders, readLesson } from '#server/services/import-folder'
 import { putIntoUse, useView } from '#server/services/into-use'
 import { EFFECTS } from '#shared/schemas/lists'
+import { databaseHere } from './lib/database-here'
 
 const { values, positionals } = parseArgs({ allowPositionals: true, options: { studio: { type: 'string' }, by: { type: 'string' }, use: { type: 'string' }, effect: { type: 'string' } } })
 const [folder] = positionals
-const url = process.env.NUXT_DATABASE_URL
 const effect = EFFECTS.find(one => one === values.effect)
 
 function usageFault(): string | null {
   if (!folder || positionals.length > 1) return 'Say which folder: npm run lessons:import -- <folder> --studio <slug>'
   if (!values.studio) return 'Say which studio: --studio <slug>'
   if (values.effect !== undefined && !effect) return `--effect is one of ${EFFECTS.join(', ')}`
-  return url ? null : 'Say which database: NUXT_DATABASE_URL=mysql://...'
+  return null
 }
 
 const sentenceOf = (error: unknown): string => (error instanceof Error ? error.message : String(error))
 
-async function run(from: string, databaseUrl: string): Promise<boolean> {
-  const { db, pool } = openDatabase(databaseUrl, 2)
-  const files = openFiles(process.env.NUXT_FILES_DIR ?? '.data/files')
+async function run(from: string): Promise<boolean> {
+  const here = databaseHere()
+  const { db, pool } = openDatabase(here.url, 2)
+  const files = openFiles(here.files)
   let isWell = true
   try {
     const who = await authorOf(db, values.studio ?? '', values.by)
@@ -67,7 +68,7 @@ if (fault) {
   process.exitCode = 2
 }
 else {
-  const isWell = await run(folder ?? '', url ?? '').catch((error: unknown) => {
+  const isWell = await run(folder ?? '').catch((error: unknown) => {
     console.error(sentenceOf(error))
     return false
   })

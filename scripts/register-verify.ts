@@ -2,10 +2,9 @@
 import { openDatabase } from '#server/db/client'
 import { studios } from '#server/db/schema/studio'
 import { verify } from '#server/services/register'
+import { databaseHere } from './lib/database-here'
 
-const url = process.env.NUXT_DATABASE_URL
-if (!url) throw new Error('Say which database: NUXT_DATABASE_URL=mysql://...')
-const { db, pool } = openDatabase(url, 2)
+const { db, pool } = openDatabase(databaseHere().url, 2)
 let isWhole = true
 try {
   for (const studio of await db.select().from(studios)) {

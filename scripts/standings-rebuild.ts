@@ -3,11 +3,10 @@ import { openDatabase } from '#server/db/client'
 import { studios } from '#server/db/schema/studio'
 import { inTransaction } from '#server/db/transaction'
 import { rebuildStandings } from '#server/services/standings'
+import { databaseHere } from './lib/database-here'
 
-const url = process.env.NUXT_DATABASE_URL
-if (!url) throw new Error('Say which database: NUXT_DATABASE_URL=mysql://...')
 const mend = process.argv.includes('--mend')
-const { db, pool } = openDatabase(url, 2)
+const { db, pool } = openDatabase(databaseHere().url, 2)
 let all = 0
 try {
   for (const studio of await db.select().from(studios)) {
