@@ -33,7 +33,8 @@ export function drawStrip({ length, marks }: StripFigures, says: StripSays): Dra
   inOrder.forEach(({ mm }, i) => shapes.push({ t: 'line', role: 'tick', d: places('M', at(mm), y - 16, 'V', y + 54 + i * 44), width: 2 }))
   inOrder.forEach(({ mm, says: figure }, i) => {
     const row = y + 44 + i * 44
-    const isRoomy = at(mm) < WIDTH - 170
+    // To the right of its end there is room, but where the wire ends or the tick of a longer mark comes down.
+    const isRoomy = at(mm) < WIDTH - 170 && !inOrder.some(other => other.mm > mm && at(other.mm) < at(mm) + 130)
     shapes.push({ t: 'dimension', from: [at(0), row], to: [at(mm), row], at: isRoomy ? [at(mm) + 14, row + 10] : [at(mm) - 14, row - 8], anchor: isRoomy ? 'start' : 'end', says: figure, main: false })
   })
   return { width: WIDTH, height: y + 44 + Math.max(1, inOrder.length) * 44, shapes }

@@ -19,6 +19,16 @@ describe('a strip', () => {
     const rows = dimensions(strip).map(one => one.at[1])
     expect(new Set(rows).size).toBe(rows.length)
   })
+  it('puts no figure across the tick of a mark close by', () => {
+    const close = drawStrip({ length: 230, marks: [108, 115, 122] }, { length: '230 mm', marks: ['108 mm', '115 mm', '122 mm'] })
+    const [, ...marks] = dimensions(close)
+    const ends = marks.map(mark => mark.to[0])
+    for (const [i, mark] of marks.entries()) {
+      if (mark.anchor === 'start') expect(ends.slice(i + 1).every(end => end > mark.at[0] + 110)).toBe(true)
+      else expect(mark.at[0]).toBeLessThan(mark.to[0])
+    }
+    expect(marks.map(mark => mark.anchor)).toEqual(['end', 'end', 'start'])
+  })
   it('is not drawn with a mark off the wire, or no length', () => {
     expect(drawStrip({ length: 100, marks: [101] }, { length: '', marks: [] })).toBeNull()
     expect(drawStrip({ length: 0, marks: [] }, { length: '', marks: [] })).toBeNull()
