@@ -7,11 +7,12 @@ import { run } from './run.mjs'
 import { say, trouble } from './say.mjs'
 
 const MARK = join(ROOT, 'node_modules', '.thirdhand-lock')
-const LEAST_NODE = [20, 19]
+/** As `engines` of package.json says. */
+const NODE_SAYS = '20.19 or a later 20, or 22.12 and newer'
 
 export function checkNode(version = process.versions.node) {
   const [major = 0, minor = 0] = version.split('.').map(Number)
-  if (major < LEAST_NODE[0] || (major === LEAST_NODE[0] && minor < LEAST_NODE[1])) trouble(`Node.js ${version} is too old. Thirdhand runs on Node.js ${LEAST_NODE.join('.')} or newer.`)
+  if (!(major === 20 && minor >= 19 || major === 22 && minor >= 12 || major > 22)) trouble(`Thirdhand does not run on Node.js ${version}. Install Node.js ${NODE_SAYS}.`)
 }
 
 /** What `npm ci` would install, as one hash: the lock file and the flags beside it. */
@@ -38,11 +39,11 @@ const PROGRAMS = {
 }
 
 /** Installs Debian's packages that are missing. Without the right to, says the line that does it. */
-export async function installPrograms(names) {
-  const missing = names.filter(name => !PROGRAMS[name].some(existsSync))
+export async function installPrograms(names, { isThere = existsSync, mayInstall = process.getuid?.() === 0 } = {}) {
+  const missing = names.filter(name => !PROGRAMS[name].some(path => isThere(path)))
   if (missing.length === 0) return
   const line = `apt-get update && apt-get install -y --no-install-recommends ${missing.join(' ')}`
-  if (process.getuid?.() !== 0) trouble(`${missing.join(' and ')} is missing, and only the administrator may install it. Run this once, then start again:\n  su -c "${line}"`)
+  if (!mayInstall) trouble(`${missing.join(' and ')} ${missing.length > 1 ? 'are' : 'is'} missing, and only the administrator may install ${missing.length > 1 ? 'them' : 'it'}. Run this once, then start again:\n  su -c "${line}"`)
   say(`Installing Debian's ${missing.join(' and ')} ...`)
   const { code, out } = await run('sh', ['-c', line], { keep: true, env: { DEBIAN_FRONTEND: 'noninteractive' } })
   if (code !== 0) {
