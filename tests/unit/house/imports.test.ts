@@ -23,8 +23,18 @@ describe('imports run one way', () => {
     expect(await faults(path, code)).toContain('no-restricted-imports')
   })
 
+  it.each([
+    ['app/utils/g.ts', 'export const y = () => import(\'#server/services/x\')\n'],
+    ['app/utils/h.ts', 'export const y = () => import(\'../../server/services/x\')\n'],
+    ['server/services/g.ts', 'export const y = () => import(\'~/utils/x\')\n'],
+    ['shared/bench/g.ts', 'export const y = () => import(\'../lesson/x\')\n'],
+  ])('%s may not while it runs either', async (path, code) => {
+    expect(await faults(path, code)).toContain('no-restricted-syntax')
+  })
+
   it('the right way is let through', async () => {
     expect(await faults('shared/judging/c.ts', 'import { x } from \'../bench/x\'\n\nexport const y = x\n')).toEqual([])
+    expect(await faults('app/utils/c.ts', 'export const y = () => import(\'~/utils/x\')\n')).toEqual([])
     expect(await faults('server/services/c.ts', 'import { x } from \'../../shared/bench/x\'\n\nexport const y = x\n')).toEqual([])
   })
 }, 60_000)
