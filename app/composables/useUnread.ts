@@ -25,6 +25,10 @@ export function useUnread(screen: MaybeRefOrGetter<string>): { isMore: Ref<boole
   useEventListener('scroll', look, { capture: true, passive: true })
   useEventListener('resize', look)
   watch(() => toValue(screen), () => { void nextTick(look) }, { flush: 'post', immediate: true })
-  onMounted(look)
+  onMounted(() => {
+    look()
+    // Letters of another width may take more lines.
+    void document.fonts.ready.then(look)
+  })
   return { isMore, moveOn }
 }
