@@ -25,7 +25,7 @@ await page.goto(`${base}/lessons/wrapped-loop-link/write?line=215`, { waitUntil:
 await shoot(page, 'write')
 await page.goto(`${base}/looks`, { waitUntil: 'networkidle' })
 await page.getByRole('link', { name: /DEV-WL/ }).first().click()
-await page.waitForURL(/looks\/[0-9A-Z]{26}/)
+await page.getByText('bag DEV-WL').waitFor()
 await page.waitForLoadState('networkidle')
 await shoot(page, 'judge')
 await page.goto(`${base}/classes`, { waitUntil: 'networkidle' })
