@@ -12,7 +12,11 @@ try {
   const release = await takeFolder(folders)
   if (!process.argv.includes('--yes')) {
     const ask = createInterface({ input: process.stdin, output: process.stdout })
-    const answer = await ask.question('Everything of this studio here goes: people, lessons, pieces, records. Write “yes” to do it: ')
+    // Ctrl-C is a no, and so is an end of what is read (Ctrl-D).
+    const answer = await new Promise((resolve) => {
+      ask.on('close', () => resolve('')).on('SIGINT', () => { say(''); ask.close() })
+      ask.question('Everything of this studio here goes: people, lessons, pieces, records. Write “yes” to do it: ').then(resolve)
+    })
     ask.close()
     if (answer.trim() !== 'yes') { await release(); say('Nothing was changed.'); process.exit(0) }
   }

@@ -5,7 +5,7 @@ import { placeOf } from './lib/host.mjs'
 import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
 import { startMariadb } from './lib/mariadb.mjs'
 import { endLeftOver, noteChild, takeFolder } from './lib/locks.mjs'
-import { endAll, until, whyNot } from './lib/run.mjs'
+import { endAll, startNoMore, until, whyNot } from './lib/run.mjs'
 import { say, Trouble, trouble } from './lib/say.mjs'
 import { secretsOf } from './lib/secrets.mjs'
 import { build, startCatcher, startServer, step } from './lib/services.mjs'
@@ -16,6 +16,7 @@ let stopping = null
 /** Stops all that was started, the last first; the database cleanly. */
 function stopAll() {
   stopping ??= (async () => {
+    startNoMore()
     for (const stop of stops.splice(0).reverse()) await stop()
     await endAll()
   })()

@@ -6,7 +6,7 @@ import { foldersOf, ROOT } from './lib/folders.mjs'
 import { checkNode, installPackages, installPrograms } from './lib/install.mjs'
 import { startMariadb } from './lib/mariadb.mjs'
 import { endLeftOver, noteChild, takeFolder, withLock } from './lib/locks.mjs'
-import { endAll, freePort, run, until } from './lib/run.mjs'
+import { endAll, freePort, run, startNoMore, until } from './lib/run.mjs'
 import { say, Trouble } from './lib/say.mjs'
 import { secretsOf } from './lib/secrets.mjs'
 import { build, startCatcher, startServer, step } from './lib/services.mjs'
@@ -19,10 +19,11 @@ const folders = foldersOf('.data-test')
 const reports = join(folders.data, 'reports')
 const counts = { passed: 0, failed: 0 }
 const stops = []
+let stopped = false
 
 /** One stage with its seconds. What it throws is a failure of its own. */
 async function stage(name, work) {
-  if (only && only !== name && name !== 'build') return
+  if (stopped || only && only !== name && name !== 'build') return
   const began = Date.now()
   say(`\n== ${name}`)
   let told
@@ -130,11 +131,12 @@ async function main() {
 }
 
 async function end(code) {
+  startNoMore()
   for (const stop of stops.splice(0).reverse()) await Promise.resolve(stop()).catch(error => say(String(error)))
   await endAll()
   process.exit(code)
 }
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => end(1))
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => { stopped = true; end(1) })
 
 main().catch((error) => {
   say(error instanceof Trouble ? error.message : String(error.stack ?? error))

@@ -8,9 +8,11 @@ import { trouble } from './say.mjs'
 
 /** Everything started here and not ended yet, the last one last. */
 const children = new Set()
+let isEnding = false
 
 /** Starts a program in a process group of its own and remembers it, so that nothing outlives us whenever we are stopped. */
 export function start(command, args, options) {
+  if (isEnding) trouble('It was stopped.')
   const child = spawn(command, args, { ...options, detached: true })
   children.add(child)
   child.on('exit', () => children.delete(child))
@@ -37,6 +39,9 @@ function tell(group, signal) {
   catch { /* nobody is left in it */ }
 }
 
+/** From here on nothing more is started: who goes on with the next thing while the last one ends gets a sentence. */
+export function startNoMore() { isEnding = true }
+
 /** Ends all that is left, the last started first. A database gets a minute to write what it holds. */
 export async function endAll() {
   for (const child of [...children].reverse()) await end(child, 60)
@@ -45,6 +50,7 @@ export async function endAll() {
 /** Runs a command to its end. Returns its code and, when kept, what it printed. */
 export function run(command, args, { env = {}, cwd = ROOT, keep = false, input = null } = {}) {
   return new Promise((resolve, reject) => {
+    // What start() throws rejects this promise.
     const child = start(command, args, { cwd, env: { ...process.env, ...env }, stdio: [input === null ? 'ignore' : 'pipe', keep ? 'pipe' : 'inherit', keep ? 'pipe' : 'inherit'] })
     let out = ''
     child.stdout?.on('data', (chunk) => { out += chunk })

@@ -108,6 +108,16 @@ describe('what was started', () => {
     expect(beganAt(Number(out))).toBeNull()
   })
 
+  it('is the last: who goes on with the next thing while we end starts nothing', async () => {
+    const lib = new URL('../../../scripts/lib/run.mjs', import.meta.url)
+    const after = join(folder, 'after')
+    const code = `const { endAll, run, startNoMore } = await import(${JSON.stringify(lib.href)})
+      const next = run('sleep', ['300']).then(() => run('touch', [${JSON.stringify(after)}])).catch(error => error.message)
+      startNoMore(); await endAll(); console.log(await next)`
+    const { code: ended, out } = await run(process.execPath, ['--input-type=module', '-e', code], { keep: true })
+    expect({ ended, out: out.trim(), isThere: existsSync(after) }).toEqual({ ended: 0, out: 'It was stopped.', isThere: false })
+  })
+
   it('fails in a sentence when it does not come', async () => {
     await expect(until(() => false, 0.2, 'It did not answer.')).rejects.toThrow('It did not answer.')
   })
