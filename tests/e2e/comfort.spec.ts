@@ -29,6 +29,25 @@ test('much enlarged, a pedal alone reads a step to its end before the next one c
   await marcus.context.close()
 })
 
+test('four times enlarged, most of the sheet is for what is said, and Help now stays in its corner', async ({ browser }) => {
+  const hana = await person(browser, { width: 1180, height: 820 })
+  const { page, context } = hana
+  await comeIn(hana, 'hana')
+  const base = String(process.env.TEST_BASE_URL)
+  const choose = (textSize: number) => context.request.patch(`${base}/api/me`, { data: { textSize, hand: 'left', ground: 'paper' }, headers: { 'origin': base, 'sec-fetch-site': 'same-origin' } })
+  expect((await choose(400)).ok()).toBe(true)
+  await page.goto('/bench')
+  const help = page.getByRole('button', { name: 'Help now' })
+  await expect(help).toBeInViewport({ ratio: 1 })
+  await page.getByRole('link', { name: 'Go on' }).first().click()
+  await page.getByRole('button', { name: 'Yes, go on' }).click()
+  await expect(help).toBeInViewport({ ratio: 1 })
+  const share = await page.locator('.bench-main').evaluate(element => element.clientHeight / innerHeight)
+  expect(share).toBeGreaterThan(0.7)
+  expect((await choose(100)).ok()).toBe(true)
+  await context.close()
+})
+
 test('for a left hand a picture that may turn over does, and what is fixed does not', async ({ browser }) => {
   // Both are left-handed (server/db/seed): Ben threads a strand, Hana lays a scroll, whose way round is fixed.
   for (const [key, turns] of [['ben', true], ['hana', false]] as const) {
